@@ -1,0 +1,97 @@
+package convection
+
+import (
+	"context"
+	"fmt"
+
+	"example.org/overturn/heat"
+	"example.org/overturn/stokes"
+	"example.org/overturn/stokes/staggered"
+)
+
+// A system holds the kernels of one problem and what passes between them.
+type system struct {
+	Problem
+	stokes    *stokes.Solver
+	heat      *heat.Stepper
+	viscosity *staggered.Scalar // nil where the problem has no law
+	buoyancy  *staggered.Vector
+}
+
+func newSystem(p Problem, s Settings) (*system, error) {
+	p, err := p.withDefaults()
+	if err != nil {
+		return nil, err
+	}
+	sys := &system{Problem: p, buoyancy: staggered.NewVector(p.Grid)}
+	if sys.stokes, err = stokes.NewSolver(p.Grid, p.Walls, s.Stokes); err != nil {
+		return nil, fmt.Errorf("convection: %w", err)
+	}
+	eq := heat.Equation{Grid: p.Grid, Walls: *p.Thermal}
+	if p.Conductivity != 1 {
+		eq.Conductivity = uniform(p.Grid, p.Conductivity)
+	}
+	if p.HeatCapacity != 1 {
+		eq.HeatCapacity = uniform(p.Grid, p.HeatCapacity)
+	}
+	if p.Heating != 0 {
+		eq.Source = uniform(p.Grid, p.Heating)
+	}
+	if sys.heat, err = heat.NewStepper(eq, s.Heat); err != nil {
+		return nil, fmt.Errorf("convection: %w", err)
+	}
+	if p.Viscosity != nil {
+		sys.viscosity = staggered.NewScalar(p.Grid)
+	}
+	return sys, nil
+}
+
+func uniform(g *staggered.Grid, v float64) *staggered.Scalar {
+	s := staggered.NewScalar(g)
+	s.SetAll(v)
+	return s
+}
+
+// solveFlow finds the flow that goes with a temperature, starting from what
+// flow holds.
+func (sys *system) solveFlow(ctx context.Context, t *staggered.Scalar, flow *staggered.Flow) (stokes.Report, error) {
+	if sys.viscosity != nil {
+		sys.viscosityTo(sys.viscosity, t)
+	}
+	sys.buoyancyTo(sys.buoyancy, t)
+	rep, err := sys.stokes.Solve(ctx, flow, sys.viscosity, sys.buoyancy)
+	if err != nil {
+		return rep, fmt.Errorf("convection: %w", err)
+	}
+	return rep, nil
+}
+
+// viscosityTo evaluates the law for each row of cells.
+func (sys *system) viscosityTo(dst, t *staggered.Scalar) {
+	g := sys.Grid
+	top := g.ZNodes()[g.NZ()]
+	for k, z := range g.ZCentres() {
+		sys.Viscosity.ViscosityTo(dst.Row(k), t.Row(k), top-z)
+	}
+}
+
+// buoyancyTo stores the buoyancy on the faces less its mean over each height.
+// The mean drives no flow, pressure balances it to the last bit; but beside it
+// the relative tolerance of the Stokes solve would be blind to a disturbance a
+// million times smaller.
+func (sys *system) buoyancyTo(dst *staggered.Vector, t *staggered.Scalar) {
+	dst.FillVertical(t, sys.Rayleigh)
+	nx, nz := sys.Grid.Cells()
+	dx, width := sys.Grid.DX(), sys.Grid.Width()
+	for k := 0; k <= nz; k++ {
+		row := dst.Z[k*nx:][:nx]
+		mean := 0.0
+		for i, b := range row {
+			mean += b * dx[i]
+		}
+		mean /= width
+		for i := range row {
+			row[i] -= mean
+		}
+	}
+}
