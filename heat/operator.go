@@ -130,16 +130,22 @@ func (op *operator) capacityOf(cell int) float64 {
 	return op.capacity
 }
 
+// cellCapacity returns the heat capacity that the coefficients are not divided
+// by yet.
+func (op *operator) cellCapacity(cell int) float64 {
+	if op.capacities != nil {
+		return op.capacities[cell]
+	}
+	return 1
+}
+
 // bound sets what the stable step needs to know of conduction.
 func (op *operator) bound() {
 	op.decay, op.stiffness, op.softest = 0, 0, math.Inf(1)
 	for k := range op.nz {
 		for i := range op.nx {
 			own, others := op.conduction(i, k)
-			c := 1.0
-			if op.capacities != nil {
-				c = op.capacities[k*op.nx+i]
-			}
+			c := op.cellCapacity(k*op.nx + i)
 			op.decay = math.Max(op.decay, own/c)
 			op.stiffness = math.Max(op.stiffness, (own+others)/c)
 			op.softest = math.Min(op.softest, op.kappa(i, k)/c)
@@ -148,11 +154,11 @@ func (op *operator) bound() {
 }
 
 // conduction returns the coefficient of a cell's own temperature in the heat
-// that it loses by conduction, and the sum of those of its neighbours in what it
-// gains.
+// per volume that it loses by conduction, and the sum of those of its
+// neighbours in what it gains.
 func (op *operator) conduction(i, k int) (own, others float64) {
-	s := op.stencil(i, k, nil)
-	return s.centre, -(s.south + s.west + s.east + s.north)
+	s, volume := op.stencil(i, k, nil), op.dx[i]*op.dz[k]
+	return s.centre / volume, -(s.south + s.west + s.east + s.north) / volume
 }
 
 // linearWeights returns the weights with which the cells before and after each

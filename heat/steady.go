@@ -83,11 +83,8 @@ func (op *operator) determined(flow *staggered.Flow) bool {
 func (op *operator) shift(diagonal []float64, rate float64) {
 	for k, dz := range op.dz {
 		for i, dx := range op.dx {
-			c := 1.0
-			if op.capacities != nil {
-				c = op.capacities[k*op.nx+i]
-			}
-			diagonal[k*op.nx+i] += rate * c * dx * dz
+			c := k*op.nx + i
+			diagonal[c] += rate * op.cellCapacity(c) * dx * dz
 		}
 	}
 }

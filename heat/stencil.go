@@ -12,53 +12,63 @@ type stencil struct{ centre, south, west, east, north float64 }
 // stencil returns the coefficients of a cell under Central advection; a nil
 // flow is at rest. A neighbour beyond a wall has none.
 func (op *operator) stencil(i, k int, flow *staggered.Flow) stencil {
-	var s stencil
-	nx, nz := op.nx, op.nz
-	scale := 1.0 // velocity counts as heat where capacity varies
-	if op.capacities != nil {
-		scale = op.capacities[k*nx+i]
-	}
+	nx := op.nx
+	scale := op.cellCapacity(k*nx + i) // velocity counts as heat where it varies
 	u, v := [2]float64{}, [2]float64{} // at the west and east, south and north face
 	if flow != nil {
 		u = [2]float64{scale * flow.VX[k*(nx+1)+i], scale * flow.VX[k*(nx+1)+i+1]}
 		v = [2]float64{scale * flow.VZ[k*nx+i], scale * flow.VZ[(k+1)*nx+i]}
 	}
+	x := op.alongXWith(i, k, u)
+	z := op.alongZWith(i, k, v)
+	dx, dz := op.dx[i], op.dz[k]
+	return stencil{x.centre*dz + z.centre*dx, z.south * dx, x.west * dz, x.east * dz, z.north * dx}
+}
+
+// alongX returns the part of conduction along x, per height.
+func (op *operator) alongX(i, k int) stencil { return op.alongXWith(i, k, [2]float64{}) }
+
+// alongZ returns the part of conduction along z, per width.
+func (op *operator) alongZ(i, k int) stencil { return op.alongZWith(i, k, [2]float64{}) }
+
+// alongXWith returns the part along x with the flow u through the west and the
+// east face.
+func (op *operator) alongXWith(i, k int, u [2]float64) (s stencil) {
 	if i > 0 || op.ring {
 		c := op.faceX(i, k)
 		s.west -= u[0]*op.wl[i] + c
 		s.centre -= u[0]*op.wr[i] - c
 	} else {
-		op.walls[staggered.Left].enter(k, u[0], nx, &s.centre, &s.east)
+		op.walls[staggered.Left].enter(k, u[0], op.nx, &s.centre, &s.east)
 	}
-	if i < nx-1 || op.ring {
+	if i < op.nx-1 || op.ring {
 		c := op.faceX(i+1, k)
 		s.centre += u[1]*op.wl[i+1] + c
 		s.east += u[1]*op.wr[i+1] - c
 	} else {
-		op.walls[staggered.Right].enter(k, -u[1], nx, &s.centre, &s.west)
+		op.walls[staggered.Right].enter(k, -u[1], op.nx, &s.centre, &s.west)
 	}
-	s = s.times(op.dz[k])
-	z := stencil{}
-	if k > 0 {
-		c := op.faceZ(i, k)
-		z.south -= v[0]*op.wb[k] + c
-		z.centre -= v[0]*op.wa[k] - c
-	} else {
-		op.walls[staggered.Bottom].enter(i, v[0], nz, &z.centre, &z.north)
-	}
-	if k < nz-1 {
-		c := op.faceZ(i, k+1)
-		z.centre += v[1]*op.wb[k+1] + c
-		z.north += v[1]*op.wa[k+1] - c
-	} else {
-		op.walls[staggered.Top].enter(i, -v[1], nz, &z.centre, &z.south)
-	}
-	z = z.times(op.dx[i])
-	return stencil{s.centre + z.centre, s.south + z.south, s.west + z.west, s.east + z.east, s.north + z.north}
+	return s
 }
 
-func (s stencil) times(f float64) stencil {
-	return stencil{s.centre * f, s.south * f, s.west * f, s.east * f, s.north * f}
+// alongZWith returns the part along z with the flow v through the south and the
+// north face.
+func (op *operator) alongZWith(i, k int, v [2]float64) (s stencil) {
+	if k > 0 {
+		c := op.faceZ(i, k)
+		s.south -= v[0]*op.wb[k] + c
+		s.centre -= v[0]*op.wa[k] - c
+	} else {
+		op.walls[staggered.Bottom].enter(i, v[0], op.nz, &s.centre, &s.north)
+	}
+	if k < op.nz-1 {
+		c := op.faceZ(i, k+1)
+		s.centre += v[1]*op.wb[k+1] + c
+		s.north += v[1]*op.wa[k+1] - c
+	} else {
+		op.walls[staggered.Top].enter(i, -v[1], op.nz, &s.centre, &s.south)
+	}
+	return s
 }
 
 // enter subtracts the heat that enters through cell j of the wall, conducted

@@ -54,7 +54,8 @@ func (st *Stepper) Grid() *staggered.Grid { return st.op.g }
 
 // SetWalls replaces the values of the walls, for conditions that change in
 // time: set them to those of the middle of the next step to stay second order.
-// Sides cannot become periodic or cease to be.
+// Sides cannot become periodic or cease to be. On error the walls are as before
+// or undefined where a function returned a number that is not finite.
 func (st *Stepper) SetWalls(w Walls) error {
 	if err := w.check(); err != nil {
 		return err
@@ -62,13 +63,17 @@ func (st *Stepper) SetWalls(w Walls) error {
 	if (w.Left.kind == periodic) != st.op.ring {
 		return fmt.Errorf("heat: left wall was %v and becomes %v, want both periodic or neither", st.walls.Left, w.Left)
 	}
+	old := st.walls
 	if err := st.op.setWalls(&w); err != nil {
 		return err
 	}
-	st.op.bound()
 	st.walls = w
+	if w.conductsAs(&old) {
+		return nil
+	}
+	st.op.bound()
 	if st.implicit != nil {
-		st.implicit.forget()
+		st.implicit = newImplicit(st.op, st.set.Workers)
 	}
 	return nil
 }

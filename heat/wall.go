@@ -125,3 +125,15 @@ func (w *Walls) check() error {
 	}
 	return nil
 }
+
+// conductsAs reports whether the flux through each wall depends on temperature
+// as with other walls, whatever the prescribed numbers.
+func (w *Walls) conductsAs(other *Walls) bool {
+	for _, s := range staggered.Sides() {
+		a, b := w.side(s), other.side(s)
+		if a.kind != b.kind || a.coefficient != b.coefficient {
+			return false
+		}
+	}
+	return true
+}

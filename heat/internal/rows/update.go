@@ -50,3 +50,19 @@ func UpdateVarying(out, old, t []float64, carried, conducted *Fluxes, source, ca
 	}
 	return sum, moved
 }
+
+// Sum stores t + k in out.
+func Sum(out, t, k []float64) {
+	t, k = t[:len(out)], k[:len(out)]
+	for i := range out {
+		out[i] = t[i] + k[i]
+	}
+}
+
+// Finish adds 3/2·(u − t) + k/2 to t.
+func Finish(t, u, k []float64) {
+	u, k = u[:len(t)], k[:len(t)]
+	for i, v := range t {
+		t[i] = v + (1.5*(u[i]-v) + 0.5*k[i])
+	}
+}
