@@ -82,7 +82,10 @@ func (l Layer) Scales() (Scales, error) {
 		topography:  units.Length(stress / (float64(m.Density) * float64(l.Gravity))),
 		rayleigh:    ra,
 	}
-	return s, s.check()
+	if err := s.check(); err != nil {
+		return Scales{}, err
+	}
+	return s, nil
 }
 
 // check guards against scales that overflow or vanish though each field of the

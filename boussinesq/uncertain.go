@@ -108,8 +108,8 @@ func (u Uncertain) Sample(f Number, settings *Settings) (*Sample, error) {
 		if values[i], err = f(l); err != nil {
 			return nil, fmt.Errorf("draw %d: %w", i, err)
 		}
-		if math.IsNaN(values[i]) {
-			return nil, &FieldError{Field: fmt.Sprintf("number of draw %d", i), Value: "NaN", Want: "a number"}
+		if math.IsNaN(values[i]) || math.IsInf(values[i], 0) {
+			return nil, &FieldError{Field: fmt.Sprintf("number of draw %d", i), Value: fmt.Sprint(values[i]), Want: "a finite number"}
 		}
 	}
 	return newSample(values, params, slices), nil
