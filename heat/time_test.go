@@ -1,0 +1,202 @@
+package heat
+
+import (
+	"context"
+	"fmt"
+	"math"
+	"testing"
+
+	"example.org/overturn/stokes/staggered"
+	"github.com/stretchr/testify/require"
+)
+
+// integrate steps a temperature to an end time in equal steps.
+func integrate(t *testing.T, st *Stepper, temperature *staggered.Scalar, flow *staggered.Flow, end float64, steps int) {
+	t.Helper()
+	for range steps {
+		_, err := st.Step(context.Background(), temperature, flow, end/float64(steps))
+		require.NoError(t, err)
+	}
+}
+
+// A temperature that decays towards a steady state, in space and time together:
+// the step falls as the cell size squared, under Implicit as the cell size.
+func TestTransientIsSecondOrder(t *testing.T) {
+	for _, walls := range []string{"TTTT", "FRTF", "PPRT", "RFFT"} {
+		for _, scheme := range []Scheme{RungeKutta3, RungeKutta2, Implicit} {
+			t.Run(fmt.Sprintf("%s/%v", walls, scheme), func(t *testing.T) {
+				var errs []float64
+				for _, n := range []int{12, 24, 48} {
+					m := newManufactured()
+					m.sides, m.ends, m.graded = walls[:2], walls[2:], scheme == Implicit
+					errs = append(errs, transientError(t, m, n, scheme))
+				}
+				requireOrder(t, "temperature", 1.85, errs)
+			})
+		}
+	}
+}
+
+func transientError(t *testing.T, m *manufactured, n int, scheme Scheme) float64 {
+	const end = 0.03
+	st, temperature, flow := m.problem(t, n, &Settings{Scheme: scheme, Limit: Unenforced})
+	steps := n
+	if scheme != Implicit {
+		steps = int(math.Ceil(end / st.StableStep(flow)))
+	}
+	dt := end / float64(steps)
+	temperature.Fill(func(x, z float64) float64 { return m.exact(x, z, 1) })
+	for j := range steps {
+		decay := math.Exp(-(float64(j) + 0.5) * dt)
+		st.source.Fill(func(x, z float64) float64 { return m.source(x, z, decay) })
+		_, err := st.Step(context.Background(), temperature, flow, dt)
+		require.NoError(t, err)
+	}
+	exact := staggered.NewScalar(st.Grid())
+	exact.Fill(func(x, z float64) float64 { return m.exact(x, z, math.Exp(-end)) })
+	largest, _ := differences(temperature.Values, exact.Values)
+	return largest
+}
+
+// The order in time alone, on one grid: differences between runs of which each
+// takes half the step of the one before.
+func TestOrderInTime(t *testing.T) {
+	for scheme, want := range map[Scheme]float64{RungeKutta2: 2, RungeKutta3: 3, Implicit: 2} {
+		t.Run(scheme.String(), func(t *testing.T) {
+			m := newManufactured()
+			m.sides, m.ends, m.graded = "TF", "RT", scheme == Implicit
+			var runs [4][]float64
+			for j := range runs {
+				st, temperature, flow := m.problem(t, 20, &Settings{Scheme: scheme, Limit: Unenforced})
+				temperature.Fill(func(x, z float64) float64 { return m.exact(x, z, 1) })
+				end := 16 * st.StableStep(flow)
+				if scheme == Implicit {
+					end = 0.1
+				}
+				integrate(t, st, temperature, flow, end, 16<<j)
+				runs[j] = temperature.Values
+			}
+			var errs []float64
+			for j := range 3 {
+				e, _ := differences(runs[j], runs[j+1])
+				errs = append(errs, e)
+			}
+			requireOrder(t, "time", want-0.15, errs)
+			require.LessOrEqual(t, math.Log2(errs[1]/errs[2]), want+0.4)
+		})
+	}
+}
+
+// One implicit step may be a hundred times as long as an explicit one.
+func TestImplicitStepIsFree(t *testing.T) {
+	g, err := staggered.Graded(32, 32, 1, 1, staggered.Grading{Top: 8, Bottom: 8})
+	require.NoError(t, err)
+	eq := Equation{Grid: g, Walls: Walls{Bottom: Isothermal(1), Top: Isothermal(0)}}
+	explicit, err := NewStepper(eq, nil)
+	require.NoError(t, err)
+	st, err := NewStepper(eq, &Settings{Scheme: Implicit})
+	require.NoError(t, err)
+	require.True(t, math.IsInf(st.StableStep(nil), 1))
+	temperature := staggered.NewScalar(g)
+	const dt = 0.02
+	require.Greater(t, dt, 100*explicit.StableStep(nil))
+	integrate(t, st, temperature, nil, 200*dt, 200)
+	for c, v := range temperature.Values {
+		require.InDelta(t, 1-g.ZCentres()[c/g.NX()], v, 1e-9)
+	}
+}
+
+// amplification returns by what a scheme multiplies the wave that conduction
+// multiplies by −(ax+az) and flow by −ib per unit of its step.
+func amplification(s Scheme, ax, az, b float64) complex128 {
+	z := complex(-ax-az, -b)
+	switch s {
+	case RungeKutta2:
+		return 1 + z + z*z/2
+	case RungeKutta3:
+		return 1 + z + z*z/2 + z*z*z/6
+	}
+	p := complex((1+rosenbrockGamma*ax)*(1+rosenbrockGamma*az), 0)
+	return 1 + 2*z/p + (z*z/2-z)/(p*p)
+}
+
+// No wave grows at the stable step of Central advection, whatever the ratio of
+// flow to conduction and their directions (von Neumann's analysis on an endless
+// uniform grid).
+func TestNoWaveGrowsAtStableStep(t *testing.T) {
+	const waves = 48
+	for _, scheme := range []Scheme{RungeKutta2, RungeKutta3, Implicit} {
+		for _, aspect := range []float64{1, 5} {
+			g, err := staggered.Uniform(8, 8, aspect, 1)
+			require.NoError(t, err)
+			hx, hz := g.DX()[0], g.DZ()[0]
+			st, err := NewStepper(Equation{Grid: g, Walls: Walls{Left: Periodic, Right: Periodic}}, &Settings{Scheme: scheme})
+			require.NoError(t, err)
+			for _, speed := range []float64{0.1, 3, 10, 30, 100, 1e3, 1e5} {
+				for _, angle := range []float64{0, 0.3, math.Pi / 4, 1.2, math.Pi / 2} {
+					u, v := speed*math.Cos(angle), speed*math.Sin(angle)
+					flow := staggered.NewFlow(g)
+					flow.FillVelocity(func(x, z float64) float64 { return u }, func(x, z float64) float64 { return v })
+					dt := st.StableStep(flow)
+					require.Positive(t, dt)
+					worst := 0.0
+					for i := range waves {
+						for k := range waves {
+							p, q := 2*math.Pi*float64(i)/waves, 2*math.Pi*float64(k)/waves
+							ax, az := 4*dt/(hx*hx)*sin2(p/2), 4*dt/(hz*hz)*sin2(q/2)
+							b := dt * (u*math.Sin(p)/hx + v*math.Sin(q)/hz)
+							r := amplification(scheme, ax, az, b)
+							worst = math.Max(worst, math.Hypot(real(r), imag(r)))
+						}
+					}
+					require.LessOrEqualf(t, worst, 1+1e-12, "%v, aspect %g, v = (%g, %g)", scheme, aspect, u, v)
+				}
+			}
+		}
+	}
+}
+
+func sin2(x float64) float64 { return math.Sin(x) * math.Sin(x) }
+
+// The bound is not idle: where conduction alone sets it, noise explodes a
+// twentieth beyond, and not a twentieth before.
+func TestStableStepIsSharp(t *testing.T) {
+	for _, scheme := range []Scheme{RungeKutta2, RungeKutta3} {
+		for factor, grows := range map[float64]bool{0.97: false, 1.05: true} {
+			g, err := staggered.Uniform(24, 24, 1, 1)
+			require.NoError(t, err)
+			st, err := NewStepper(Equation{Grid: g, Walls: Walls{Left: Periodic, Right: Periodic}}, &Settings{Scheme: scheme, Limit: Unenforced})
+			require.NoError(t, err)
+			temperature := staggered.NewScalar(g)
+			for c := range temperature.Values {
+				temperature.Values[c] = float64((c + c/24) % 2)
+			}
+			dt := factor * st.StableStep(nil)
+			integrate(t, st, temperature, nil, 400*dt, 400)
+			_, high := temperature.Extrema()
+			require.Equal(t, grows, high.Value > 10, "%v, factor %g: %g", scheme, factor, high.Value)
+		}
+	}
+}
+
+// Graded grids, flow along walls and variable conductivity: the bound holds.
+func TestStableStepHoldsOnGradedGrids(t *testing.T) {
+	everyMethod(t, func(t *testing.T, s Settings) {
+		m := newManufactured()
+		m.sides, m.ends, m.graded = "TF", "RT", true
+		st, temperature, flow := m.problem(t, 24, &s)
+		for j := range flow.VX {
+			flow.VX[j] *= 20
+		}
+		for j := range flow.VZ {
+			flow.VZ[j] *= 20
+		}
+		for c := range temperature.Values {
+			temperature.Values[c] = float64(c * c % 7)
+		}
+		dt := st.StableStep(flow)
+		integrate(t, st, temperature, flow, 2000*dt, 2000)
+		low, high := temperature.Extrema()
+		require.Less(t, high.Value-low.Value, 10.0)
+	})
+}
