@@ -162,10 +162,10 @@ func (w *wallLine) response(j int, t1, t2 float64) float64 { return w.c2[j]*t2 -
 // A steady state stays as it is, whatever dt.
 func (st *Stepper) rosenbrock(t []float64, dt float64, rep *Report) error {
 	im, k, u := st.implicit, st.stage[0], st.stage[1]
-	im.prepare(dt)
-	if err := st.sweep.run(k, t, t, rows.Weights{Rate: dt}, 1./2, rep); err != nil {
+	if err := st.first(k, t, rows.Weights{Rate: dt}, 1./2, dt, rep); err != nil {
 		return err
 	}
+	im.prepare(dt)
 	im.solve(k, rosenbrockGamma/2, rep)
 	rows.Sum(u, t, k)
 	if err := st.sweep.run(k, k, u, rows.Weights{Old: -2, Rate: dt}, 1./2, rep); err != nil {

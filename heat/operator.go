@@ -2,6 +2,7 @@ package heat
 
 import (
 	"math"
+	"slices"
 
 	"example.org/overturn/heat/internal/rows"
 	"example.org/overturn/stokes/staggered"
@@ -34,6 +35,7 @@ type operator struct {
 	capacity   float64   // the uniform heat capacity, 1 if capacities is set
 	capacities []float64 // of each cell, nil if uniform
 
+	steepest      float64 // the largest of ix
 	stiffness     float64 // bound of the modulus of the conductive eigenvalues
 	decay         float64 // largest coefficient of a cell's own temperature
 	softest       float64 // smallest diffusivity
@@ -48,6 +50,7 @@ func newOperator(eq *Equation) (*operator, error) {
 		dx: g.DX(), dz: g.DZ(), capacity: 1,
 	}
 	op.ix, op.iz = inverses(op.dx), inverses(op.dz)
+	op.steepest = slices.Max(op.ix)
 	op.wl, op.wr = linearWeights(op.dx)
 	op.wb, op.wa = linearWeights(op.dz)
 	op.upx, op.upz = upwindWeights(op.dx, op.ring), upwindWeights(op.dz, false)

@@ -29,8 +29,16 @@ func (st *Stepper) StableStep(flow *staggered.Flow) float64 {
 }
 
 func (st *Stepper) stableStep(flow *staggered.Flow) float64 {
+	if flow == nil {
+		return st.stepFor(0, 0)
+	}
+	return st.stepFor(st.op.courantRate(flow.VX, flow.VZ))
+}
+
+// stepFor returns the stable step for the largest Courant rate and squared
+// speed.
+func (st *Stepper) stepFor(rate, speed2 float64) float64 {
 	op := st.op
-	rate, speed2 := op.courantRate(flow)
 	if !(rate <= math.MaxFloat64) {
 		return 0
 	}
@@ -75,19 +83,19 @@ func secondOrderStep(rate, speed2PerKappa, stiffness float64) float64 {
 
 // courantRate returns the largest rate at which flow passes through a cell, the
 // sum over directions of |v|/Δ, and the largest squared speed; NaN or +Inf if a
-// velocity is.
-func (op *operator) courantRate(flow *staggered.Flow) (rate, speed2 float64) {
-	if flow == nil {
+// velocity is. Nil velocities are zero.
+func (op *operator) courantRate(vx, vz []float64) (rate, speed2 float64) {
+	if vx == nil {
 		return 0, 0
 	}
 	nx := op.nx
 	sum := 0.0
 	for k := range op.nz {
-		vx := flow.VX[k*(nx+1) : (k+1)*(nx+1)]
-		lower, upper := flow.VZ[k*nx:(k+1)*nx], flow.VZ[(k+1)*nx:(k+2)*nx]
+		row := vx[k*(nx+1) : (k+1)*(nx+1)]
+		lower, upper := vz[k*nx:(k+1)*nx], vz[(k+1)*nx:(k+2)*nx]
 		half, ix := op.iz[k]/2, op.ix[:nx]
-		left := math.Abs(vx[0])
-		for i, v := range vx[1:] {
+		left := math.Abs(row[0])
+		for i, v := range row[1:] {
 			right, up := math.Abs(v), math.Abs(lower[i])+math.Abs(upper[i])
 			across := left + right
 			r := across*ix[i]/2 + up*half
@@ -102,4 +110,18 @@ func (op *operator) courantRate(flow *staggered.Flow) (rate, speed2 float64) {
 		}
 	}
 	return rate + 0*sum, speed2
+}
+
+// courantBound bounds the numbers of courantRate by the peaks of the rows,
+// which a pass has seen.
+func (s *sweep) courantBound() (rate, speed2 float64) {
+	if s.vx == nil {
+		return 0, 0
+	}
+	for k, iz := range s.op.iz {
+		u, v := s.peaks[1][k], math.Max(s.peaks[2][k], s.peaks[2][k+1])
+		rate = math.Max(rate, u*s.op.steepest+v*iz)
+		speed2 = math.Max(speed2, u*u+v*v)
+	}
+	return rate, speed2
 }

@@ -51,8 +51,10 @@ func (st *Stepper) FactorShifted(flow *staggered.Flow, shift float64) error {
 	if !(shift >= 0 && shift <= math.MaxFloat64) {
 		return fmt.Errorf("heat: shift is %v, want finite and >= 0", shift)
 	}
-	if rate, _ := st.op.courantRate(flow); !(rate <= math.MaxFloat64) {
-		return fmt.Errorf("heat: flow: %w", ErrNotFinite)
+	if flow != nil {
+		if rate, _ := st.op.courantRate(flow.VX, flow.VZ); !(rate <= math.MaxFloat64) {
+			return fmt.Errorf("heat: flow: %w", ErrNotFinite)
+		}
 	}
 	if shift == 0 && !st.op.determined(flow) {
 		return fmt.Errorf("heat: walls %v: %w", st.walls, ErrSingular)

@@ -2,6 +2,7 @@ package heat
 
 import (
 	"context"
+	"errors"
 	"fmt"
 	"math"
 
@@ -90,11 +91,6 @@ func (st *Stepper) Step(ctx context.Context, temperature *staggered.Scalar, flow
 	if !(dt > 0 && dt <= math.MaxFloat64) {
 		return Report{}, fmt.Errorf("heat: dt is %v, want finite and > 0", dt)
 	}
-	if st.set.Limit == Enforced {
-		if stable := st.stableStep(flow); dt > stable*(1+1e-9) {
-			return Report{}, &StepError{Step: dt, Stable: stable}
-		}
-	}
 	st.sweep.begin(st.set.Advection, flow, st.source)
 	rep := Report{Step: dt}
 	var err error
@@ -106,16 +102,35 @@ func (st *Stepper) Step(ctx context.Context, temperature *staggered.Scalar, flow
 	default:
 		err = st.rungeKutta3(temperature.Values, dt, &rep)
 	}
+	if errors.Is(err, errTooLong) {
+		return Report{}, &StepError{Step: dt, Stable: st.stableStep(flow)}
+	}
 	if err != nil {
 		return Report{}, st.blame(err, temperature, flow)
 	}
 	return rep, nil
 }
 
+// errTooLong reports a step beyond the stable one.
+var errTooLong = errors.New("too long")
+
+// first runs the first stage of a step, from t to out, and finds out whether
+// the step is admissible: the velocities have passed by then.
+func (st *Stepper) first(out, t []float64, w rows.Weights, share, dt float64, rep *Report) error {
+	if err := st.sweep.run(out, t, t, w, share, rep); err != nil || st.set.Limit == Unenforced {
+		return err
+	}
+	const rounding = 1 + 1e-9
+	if dt > rounding*st.stepFor(st.sweep.courantBound()) && dt > rounding*st.stepFor(st.op.courantRate(st.sweep.vx, st.sweep.vz)) {
+		return errTooLong
+	}
+	return nil
+}
+
 // rungeKutta2 is the method of Shu & Osher (1988, eq. 2.16).
 func (st *Stepper) rungeKutta2(t []float64, dt float64, rep *Report) error {
 	u := st.stage[0]
-	if err := st.sweep.run(u, t, t, rows.Weights{Now: 1, Rate: dt}, 1./2, rep); err != nil {
+	if err := st.first(u, t, rows.Weights{Now: 1, Rate: dt}, 1./2, dt, rep); err != nil {
 		return err
 	}
 	return st.sweep.run(t, t, u, rows.Weights{Old: 1. / 2, Now: 1. / 2, Rate: dt / 2}, 1./2, rep)
@@ -124,7 +139,7 @@ func (st *Stepper) rungeKutta2(t []float64, dt float64, rep *Report) error {
 // rungeKutta3 is the method of Shu & Osher (1988, eq. 2.18).
 func (st *Stepper) rungeKutta3(t []float64, dt float64, rep *Report) error {
 	u, v := st.stage[0], st.stage[1]
-	if err := st.sweep.run(u, t, t, rows.Weights{Now: 1, Rate: dt}, 1./6, rep); err != nil {
+	if err := st.first(u, t, rows.Weights{Now: 1, Rate: dt}, 1./6, dt, rep); err != nil {
 		return err
 	}
 	if err := st.sweep.run(v, t, u, rows.Weights{Old: 3. / 4, Now: 1. / 4, Rate: dt / 4}, 1./6, rep); err != nil {

@@ -27,9 +27,11 @@ type sweep struct {
 	t         []float64
 	weights   rows.Weights
 
-	sums                []float64    // rate of heat of each row
-	moved               []float64    // its part carried by flow
-	heating             []float64    // its part from the source
+	inspecting bool         // the first pass of a step looks at its input
+	peaks      [3][]float64 // largest |T|, |vx| and |vz| of each row
+
+	moved               []float64    // heat carried into each row by flow
+	heating             []float64    // heat from the source
 	conducted, advected [4][]float64 // through the side walls of each row; through bottom and top
 }
 
@@ -46,9 +48,11 @@ type block struct {
 func newSweep(op *operator, workers int) *sweep {
 	s := &sweep{
 		op:      op,
-		sums:    make([]float64, op.nz),
 		moved:   make([]float64, op.nz),
 		heating: make([]float64, op.nz),
+	}
+	for j := range s.peaks {
+		s.peaks[j] = make([]float64, op.nz+1)
 	}
 	for _, side := range staggered.Sides() {
 		n := op.nz
@@ -78,6 +82,7 @@ func newFluxes(nx int) rows.Fluxes {
 // begin chooses what the next runs have in common.
 func (s *sweep) begin(a Advection, flow *staggered.Flow, source *staggered.Scalar) {
 	s.advection, s.vx, s.vz, s.source = a, nil, nil, nil
+	s.inspecting = true
 	if flow != nil {
 		s.vx, s.vz = flow.VX, flow.VZ
 	}
@@ -96,24 +101,60 @@ func (s *sweep) run(out, old, t []float64, w rows.Weights, share float64, rep *R
 	}
 	s.tasks[0]()
 	s.wait.Wait()
-	return s.collect(share, rep)
+	if s.inspecting {
+		s.inspecting = false
+		if !s.finite() {
+			return ErrNotFinite
+		}
+	}
+	s.collect(share, rep)
+	return nil
+}
+
+// inspect finds the peaks of row k while its numbers are on their way.
+func (s *sweep) inspect(k int) {
+	op := s.op
+	s.peaks[0][k] = rows.Peak(s.row(k))
+	if s.vx != nil {
+		s.peaks[1][k] = rows.Peak(s.vx[k*(op.nx+1) : (k+1)*(op.nx+1)])
+		s.peaks[2][k] = rows.Peak(s.vz[k*op.nx : (k+1)*op.nx])
+		if k == op.nz-1 {
+			s.peaks[2][k+1] = rows.Peak(s.vz[(k+1)*op.nx:])
+		}
+	}
+	s.heating[k] = 0
+	if s.source != nil {
+		sum := 0.0
+		for i, q := range s.source[k*op.nx : (k+1)*op.nx] {
+			sum += q * op.dx[i]
+		}
+		s.heating[k] = sum / op.capacity
+	}
+}
+
+// finite reports whether all numbers that were inspected are.
+func (s *sweep) finite() bool {
+	for _, list := range [...][]float64{s.peaks[0], s.peaks[1], s.peaks[2], s.heating} {
+		for _, v := range list {
+			if !(math.Abs(v) <= math.MaxFloat64) {
+				return false
+			}
+		}
+	}
+	return true
 }
 
 // collect adds up the budget.
-func (s *sweep) collect(share float64, rep *Report) error {
-	var total, moved float64
+func (s *sweep) collect(share float64, rep *Report) {
+	var moved float64
 	var b Report
 	for k, dz := range s.op.dz {
-		total += s.sums[k] * dz
 		moved += s.moved[k] * dz
 		b.Heating += s.heating[k] * dz
 		for _, side := range [...]staggered.Side{staggered.Left, staggered.Right} {
 			b.Conducted[side] += s.conducted[side][k] * dz
 			b.Advected[side] += s.advected[side][k] * dz
 		}
-	}
-	if !(math.Abs(total) <= math.MaxFloat64) {
-		return ErrNotFinite
 	}
 	for _, side := range [...]staggered.Side{staggered.Bottom, staggered.Top} {
 		b.Conducted[side], b.Advected[side] = s.conducted[side][0], s.advected[side][0]
@@ -125,14 +166,20 @@ func (s *sweep) collect(share float64, rep *Report) error {
 		}
 	}
 	rep.addWeighted(share*s.op.capacity, &b)
-	return nil
 }
 
 // rows works on the rows of a block.
 func (s *sweep) rows(b *block) {
+	if e, ok := s.even(); ok {
+		s.evenRows(b, e)
+		return
+	}
 	b.filled = math.NaN()
 	s.facesZ(b, b.lo)
 	for k := b.lo; k < b.hi; k++ {
+		if s.inspecting {
+			s.inspect(k)
+		}
 		b.swap()
 		s.facesZ(b, k+1)
 		s.facesX(b, k)
@@ -154,24 +201,19 @@ func (s *sweep) row(k int) []float64 {
 
 func (s *sweep) update(b *block, k int) {
 	op := s.op
-	n := op.nx
-	lo, hi := k*n, (k+1)*n
-	source := b.zeros[:n]
-	s.heating[k] = 0
+	lo, hi := k*op.nx, (k+1)*op.nx
+	out, old, t := s.out[lo:hi], s.old[lo:hi], s.t[lo:hi]
+	var source []float64
 	if s.source != nil {
 		source = s.source[lo:hi]
-		sum := 0.0
-		for i, q := range source {
-			sum += q * op.dx[i]
-		}
-		s.heating[k] = sum / op.capacity
 	}
-	out, old, t := s.out[lo:hi], s.old[lo:hi], s.t[lo:hi]
 	if op.capacities == nil {
-		s.sums[k] = rows.Update(out, old, t, b.heat.X, b.heat.Below, b.heat.Above, source,
-			op.dx, op.ix, op.iz[k], 1/op.capacity, s.weights)
+		rows.Update(out, old, t, &b.heat, source, op.ix, op.iz[k], 1/op.capacity, s.weights)
 		return
 	}
-	s.sums[k], s.moved[k] = rows.UpdateVarying(out, old, t, &b.carried, &b.heat, source,
+	if source == nil {
+		source = b.zeros[:op.nx]
+	}
+	s.moved[k] = rows.UpdateVarying(out, old, t, &b.carried, &b.heat, source,
 		op.capacities[lo:hi], op.dx, op.ix, op.iz[k], s.weights)
 }

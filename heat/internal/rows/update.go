@@ -1,40 +1,49 @@
 package rows
 
+import "math"
+
 // Weights says how a pass combines the last state, the state at hand and the
 // rate of change: Old·old + Now·t + Rate·rate.
 type Weights struct{ Old, Now, Rate float64 }
 
+// Fluxes are those through the faces of one row of cells: through the n+1
+// faces along it, below it and above it.
+type Fluxes struct{ X, Below, Above []float64 }
+
 // Update stores in out the combination w of old, t and the rate
 //
-//	(fx[i] − fx[i+1])/Δx + (fb[i] − ft[i])/Δz + scale·source
+//	(f.X[i] − f.X[i+1])·ix + (f.Below[i] − f.Above[i])·iz + scale·source
 //
-// and returns the sum of the rates times Δx, which is not finite if any of the
-// rates is not. ix and iz are 1/Δx and 1/Δz. out may be old.
-func Update(out, old, t, fx, fb, ft, source, dx, ix []float64, iz, scale float64, w Weights) float64 {
+// where ix and iz are the inverse cell sizes. out may be old. A nil source is
+// none.
+func Update(out, old, t []float64, f *Fluxes, source, ix []float64, iz, scale float64, w Weights) {
 	n := len(out)
-	old, t, fb, ft, source = old[:n], t[:n], fb[:n], ft[:n], source[:n]
-	dx, ix, fx = dx[:n], ix[:n], fx[:n+1]
-	left, sum := fx[0], 0.0
+	old, t, ix = old[:n], t[:n], ix[:n]
+	x, below, above := f.X[:n+1], f.Below[:n], f.Above[:n]
+	left := x[0]
+	if source == nil {
+		for i := range out {
+			right := x[i+1]
+			r := (left-right)*ix[i] + (below[i]-above[i])*iz
+			out[i] = w.Old*old[i] + w.Now*t[i] + w.Rate*r
+			left = right
+		}
+		return
+	}
+	source = source[:n]
 	for i := range out {
-		right := fx[i+1]
-		r := (left-right)*ix[i] + (fb[i]-ft[i])*iz + scale*source[i]
-		sum += r * dx[i]
+		right := x[i+1]
+		r := (left-right)*ix[i] + (below[i]-above[i])*iz + scale*source[i]
 		out[i] = w.Old*old[i] + w.Now*t[i] + w.Rate*r
 		left = right
 	}
-	return sum
 }
-
-// Fluxes are those through the faces of one row of cells: left and right,
-// below, above.
-type Fluxes struct{ X, Below, Above []float64 }
 
 // UpdateVarying is Update for a heat capacity that varies from cell to cell:
 // the fluxes of temperature, carried, change a cell at once, those of heat,
-// conducted, and the source by their share of its capacity. With a nil weight
-// of capacity the rate is that of temperature. It returns the sums of
-// capacity·rate·Δx and of its carried part.
-func UpdateVarying(out, old, t []float64, carried, conducted *Fluxes, source, capacity, dx, ix []float64, iz float64, w Weights) (sum, moved float64) {
+// conducted, and the source by their share of its capacity. It returns the sum
+// of what is carried, capacity·rate·dx.
+func UpdateVarying(out, old, t []float64, carried, conducted *Fluxes, source, capacity, dx, ix []float64, iz float64, w Weights) (moved float64) {
 	n := len(out)
 	old, t, source, capacity = old[:n], t[:n], source[:n], capacity[:n]
 	dx, ix = dx[:n], ix[:n]
@@ -45,10 +54,9 @@ func UpdateVarying(out, old, t []float64, carried, conducted *Fluxes, source, ca
 		q := (qx[i]-qx[i+1])*ix[i] + (qb[i]-qt[i])*iz + source[i]
 		c := capacity[i]
 		moved += c * a * dx[i]
-		sum += (c*a + q) * dx[i]
 		out[i] = w.Old*old[i] + w.Now*t[i] + w.Rate*(a+q/c)
 	}
-	return sum, moved
+	return moved
 }
 
 // Sum stores t + k in out.
@@ -65,4 +73,20 @@ func Finish(t, u, k []float64) {
 	for i, v := range t {
 		t[i] = v + (1.5*(u[i]-v) + 0.5*k[i])
 	}
+}
+
+// Peak returns the largest absolute value; +Inf or NaN if there is one. Without
+// their sign floating-point numbers sort as integers, NaN last.
+func Peak(v []float64) float64 {
+	const magnitude = 1<<63 - 1
+	var even, odd uint64
+	for len(v) >= 2 {
+		even = max(even, math.Float64bits(v[0])&magnitude)
+		odd = max(odd, math.Float64bits(v[1])&magnitude)
+		v = v[2:]
+	}
+	if len(v) == 1 {
+		even = max(even, math.Float64bits(v[0])&magnitude)
+	}
+	return math.Float64frombits(max(even, odd))
 }
