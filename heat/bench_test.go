@@ -85,7 +85,7 @@ func BenchmarkStepVarying(b *testing.B) {
 
 func benchmarkStep(b *testing.B, n int, varying string, s Settings) {
 	st, temperature, flow := benchmarkProblem(b, n, varying, s)
-	dt := st.StableStep(flow)
+	dt := 0.9 * st.StableStep(flow)
 	ctx := context.Background()
 	b.ReportAllocs()
 	for b.Loop() {

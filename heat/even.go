@@ -32,21 +32,21 @@ func (s *sweep) evenRows(b *block, e rows.Even) {
 		rows.CentralEvenZ(below, s.row(b.lo-1), s.row(b.lo), s.vz[b.lo*n:], e)
 	}
 	for k := b.lo; k < b.hi; k++ {
-		if s.inspecting {
-			s.inspect(k)
-		}
 		left, right := s.evenEnds(b, k)
 		t, out, old := s.row(k), s.out[k*n:(k+1)*n], s.old[k*n:(k+1)*n]
 		vx := s.vx[k*(n+1) : (k+1)*(n+1)]
 		if k < op.nz-1 {
 			rows.CentralEven(out, old, t, s.row(k+1), vx, s.vz[(k+1)*n:(k+2)*n], below, left, right, e, s.weights)
-			continue
+		} else {
+			s.wallZ(b, staggered.Top, op.nz)
+			above, x := b.heat.Above, b.heat.X
+			scale(above, above, op.iz[0])
+			rows.CentralX(x, t, vx, op.wl, op.wr, op.cx)
+			rows.Update(out, old, t, &rows.Fluxes{X: x, Below: below, Above: above}, nil, op.ix, 1, 1, s.weights)
 		}
-		s.wallZ(b, staggered.Top, op.nz)
-		above, x := b.heat.Above, b.heat.X
-		scale(above, above, op.iz[0])
-		rows.CentralX(x, t, vx, op.wl, op.wr, op.cx)
-		rows.Update(out, old, t, &rows.Fluxes{X: x, Below: below, Above: above}, nil, op.ix, 1, 1, s.weights)
+		if s.inspecting {
+			s.inspect(k)
+		}
 	}
 }
 

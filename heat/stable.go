@@ -119,7 +119,7 @@ func (s *sweep) courantBound() (rate, speed2 float64) {
 		return 0, 0
 	}
 	for k, iz := range s.op.iz {
-		u, v := s.peaks[1][k], math.Max(s.peaks[2][k], s.peaks[2][k+1])
+		u, v := s.peaks[0][k], math.Max(s.peaks[1][k], s.peaks[1][k+1])
 		rate = math.Max(rate, u*s.op.steepest+v*iz)
 		speed2 = math.Max(speed2, u*u+v*v)
 	}

@@ -2,6 +2,7 @@ package heat
 
 import (
 	"math"
+	"slices"
 	"sync"
 
 	"example.org/overturn/heat/internal/rows"
@@ -28,7 +29,8 @@ type sweep struct {
 	weights   rows.Weights
 
 	inspecting bool         // the first pass of a step looks at its input
-	peaks      [3][]float64 // largest |T|, |vx| and |vz| of each row
+	peaks      [2][]float64 // largest |vx| and |vz| of each row
+	sound      []bool       // whether the rates of each row are finite
 
 	moved               []float64    // heat carried into each row by flow
 	heating             []float64    // heat from the source
@@ -48,6 +50,7 @@ type block struct {
 func newSweep(op *operator, workers int) *sweep {
 	s := &sweep{
 		op:      op,
+		sound:   make([]bool, op.nz),
 		moved:   make([]float64, op.nz),
 		heating: make([]float64, op.nz),
 	}
@@ -111,15 +114,16 @@ func (s *sweep) run(out, old, t []float64, w rows.Weights, share float64, rep *R
 	return nil
 }
 
-// inspect finds the peaks of row k while its numbers are on their way.
+// inspect looks at what went into row k and came out of it while the numbers
+// are at hand.
 func (s *sweep) inspect(k int) {
 	op := s.op
-	s.peaks[0][k] = rows.Peak(s.row(k))
+	s.sound[k] = rows.Sound(s.out[k*op.nx : (k+1)*op.nx])
 	if s.vx != nil {
-		s.peaks[1][k] = rows.Peak(s.vx[k*(op.nx+1) : (k+1)*(op.nx+1)])
-		s.peaks[2][k] = rows.Peak(s.vz[k*op.nx : (k+1)*op.nx])
+		s.peaks[0][k] = rows.Peak(s.vx[k*(op.nx+1) : (k+1)*(op.nx+1)])
+		s.peaks[1][k] = rows.Peak(s.vz[k*op.nx : (k+1)*op.nx])
 		if k == op.nz-1 {
-			s.peaks[2][k+1] = rows.Peak(s.vz[(k+1)*op.nx:])
+			s.peaks[1][k+1] = rows.Peak(s.vz[(k+1)*op.nx:])
 		}
 	}
 	s.heating[k] = 0
@@ -134,7 +138,10 @@ func (s *sweep) inspect(k int) {
 
 // finite reports whether all numbers that were inspected are.
 func (s *sweep) finite() bool {
-	for _, list := range [...][]float64{s.peaks[0], s.peaks[1], s.peaks[2], s.heating} {
+	if slices.Contains(s.sound, false) {
+		return false
+	}
+	for _, list := range [...][]float64{s.peaks[0], s.peaks[1], s.heating} {
 		for _, v := range list {
 			if !(math.Abs(v) <= math.MaxFloat64) {
 				return false
@@ -177,13 +184,13 @@ func (s *sweep) rows(b *block) {
 	b.filled = math.NaN()
 	s.facesZ(b, b.lo)
 	for k := b.lo; k < b.hi; k++ {
-		if s.inspecting {
-			s.inspect(k)
-		}
 		b.swap()
 		s.facesZ(b, k+1)
 		s.facesX(b, k)
 		s.update(b, k)
+		if s.inspecting {
+			s.inspect(k)
+		}
 	}
 }
 
