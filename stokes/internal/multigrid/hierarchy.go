@@ -1,0 +1,135 @@
+package multigrid
+
+import "example.org/overturn/stokes/internal/team"
+
+// A Hierarchy is a sequence of ever coarser levels and the cycle that uses
+// them to solve the finest one approximately.
+type Hierarchy struct {
+	Levels []*Level
+	team   *team.Team
+	blocks []int // members that work on each level
+	bottom *dense
+	s      []*scratch
+}
+
+// leastCells is the size from which a level is shared among goroutines.
+const leastCells = 2048
+
+// NewHierarchy coarsens the grid of x and z down to a few cells.
+func NewHierarchy(x, z Axis, t *team.Team) *Hierarchy {
+	h := &Hierarchy{team: t}
+	for range t.Size() {
+		h.s = append(h.s, newScratch(x.N+2))
+	}
+	l := newLevel(x, z)
+	h.Levels = append(h.Levels, l)
+	for l.cells() > coarsestCells {
+		mx, mz, ok := coarsen(&l.X, &l.Z)
+		if !ok {
+			break
+		}
+		c := newLevel(*mx.coarse, *mz.coarse)
+		c.u, c.f = newFields(c.size()), newFields(c.size())
+		l.mx, l.mz = mx, mz
+		h.Levels = append(h.Levels, c)
+		l = c
+	}
+	if len(h.Levels) == 1 {
+		l.u = newFields(l.size())
+	}
+	for k, l := range h.Levels {
+		var c *Level
+		if k+1 < len(h.Levels) {
+			c = h.Levels[k+1]
+		}
+		blocks := 1
+		if l.cells() >= leastCells {
+			blocks = max(1, min(t.Size(), l.Z.N/leastBlock))
+		}
+		h.blocks = append(h.blocks, blocks)
+		l.makePasses(t, blocks, c, h.s)
+	}
+	h.bottom = newDense(l)
+	return h
+}
+
+// Finest returns the level of the grid itself.
+func (h *Hierarchy) Finest() *Level { return h.Levels[0] }
+
+// Refresh rebuilds everything that depends on the viscosity, from Eta and
+// Corner of the finest level.
+func (h *Hierarchy) Refresh() {
+	for k, l := range h.Levels {
+		l.WrapViscosity()
+		for _, pass := range l.passes.refresh {
+			h.run(k, pass)
+		}
+		l.findJumps()
+	}
+	h.bottom.factor()
+}
+
+// run does one pass on level k.
+func (h *Hierarchy) run(k int, pass func(member int)) {
+	if h.blocks[k] == 1 {
+		pass(0)
+		return
+	}
+	h.team.Run(pass)
+}
+
+// Precondition stores in z an approximate solution of the correction equation
+// with right-hand side r: one F(1,1) cycle. It keeps z and r until the next
+// call.
+func (h *Hierarchy) Precondition(z, r Fields) {
+	l := h.Finest()
+	l.u, l.f = z, r
+	h.cycle(0)
+}
+
+// cycle improves nothing into something: an F-cycle from zero on level k.
+func (h *Hierarchy) cycle(k int) {
+	l := h.Levels[k]
+	if k == len(h.Levels)-1 {
+		h.bottom.solve()
+		return
+	}
+	l.u.clear()
+	h.smooth(k)
+	h.run(k, l.passes.restrict)
+	h.cycle(k + 1)
+	if h.revisit(k + 1) {
+		h.vCycle(k + 1)
+	}
+	h.run(k, l.passes.prolong)
+	h.smooth(k)
+}
+
+// vCycle improves the correction on level k.
+func (h *Hierarchy) vCycle(k int) {
+	l := h.Levels[k]
+	if k == len(h.Levels)-1 {
+		h.bottom.solve()
+		return
+	}
+	h.smooth(k)
+	h.run(k, l.passes.restrict)
+	h.Levels[k+1].u.clear()
+	h.vCycle(k + 1)
+	h.run(k, l.passes.prolong)
+	h.smooth(k)
+}
+
+// revisit reports whether the F-cycle comes back to level k: the last level
+// is solved exactly, and on levels hardly smaller than the one before a second
+// visit costs more than it brings.
+func (h *Hierarchy) revisit(k int) bool {
+	return k < len(h.Levels)-1
+}
+
+func (h *Hierarchy) smooth(k int) {
+	l := h.Levels[k]
+	l.relaxJumps(jumpsSweeps)
+	l.passes.sweep.run()
+	l.relaxJumps(jumpsSweeps)
+}

@@ -1,0 +1,212 @@
+package multigrid
+
+import "slices"
+
+// A merge says how the cells of one axis become those of the next coarser
+// level. Each coarse cell is one, two or three fine cells; coarse nodes are
+// therefore fine nodes.
+type merge struct {
+	fine, coarse *Axis
+
+	count []int // count[I]: fine cells in coarse cell I, from 1
+	node  []int // node[I]: fine node of coarse node I; padded at the upper end
+	cell  []int // cell[i]: coarse cell of fine cell i
+
+	// Linear interpolation: the value at fine node f is
+	// (1-nodeW[f]) of coarse node cell[f] plus nodeW[f] of the next, and that
+	// at the centre of fine cell i is lowW[i] of the coarse centre low[i] plus
+	// highW[i] of the next one. The two weights of a centre beside a Slip end
+	// repeat the nearest value; beside a Stick end they lead to zero at the wall.
+	nodeW     []float64
+	low       []int
+	lowW, upW []float64
+	lowN, upN []float64 // gather weights of nodes node[I]-1 and node[I]+1
+	triples   []int     // coarse cells with three children
+	trivial   bool      // every coarse cell is one fine cell
+	allPairs  bool      // every coarse cell is two fine cells
+}
+
+// Cells are merged while they are thinner than the thinnest of the level
+// times aspectLimit; a level that would shrink by less than leastShrink raises
+// that limit.
+const (
+	aspectLimit = 1.5
+	leastShrink = 0.75
+	limitGrowth = 1.5
+	fewestCells = 2 // an axis is never coarsened below
+)
+
+// coarsen chooses the merges of both axes such that the thinnest cells become
+// thicker: on a uniform grid of square cells all of them are paired, flat
+// cells are merged in their short direction only, and on a graded grid just
+// the thin rows are. A pointwise smoother then works on any grid, for it sees
+// errors that vary on the scale of the thinnest cells only where cells are thin
+// and coarsening takes over where they are not. It returns false when no axis
+// can be coarsened.
+func coarsen(x, z *Axis) (mx, mz *merge, ok bool) {
+	thinnest := 0.0
+	most := 0.0
+	for _, a := range []*Axis{x, z} {
+		if a.N > fewestCells {
+			h := slices.Min(a.widths())
+			if thinnest == 0 || h < thinnest {
+				thinnest = h
+			}
+			most = max(most, slices.Max(a.widths()))
+		}
+	}
+	if thinnest == 0 {
+		return nil, nil, false
+	}
+	for limit := aspectLimit * thinnest; ; limit *= limitGrowth {
+		cx, cz := groups(x.widths(), limit), groups(z.widths(), limit)
+		enough := float64(len(cx)*len(cz)) <= leastShrink*float64(x.N*z.N)
+		if enough || limit > most {
+			return newMerge(x, cx), newMerge(z, cz), len(cx)*len(cz) < x.N*z.N
+		}
+	}
+}
+
+// groups returns the numbers of fine cells that make up each coarse cell when
+// neighbours no wider than limit are paired. The last pair of an odd run
+// becomes a triple; a thin cell between wide ones is left alone.
+func groups(h []float64, limit float64) []int {
+	n := len(h)
+	var counts []int
+	for i := 0; i < n; {
+		if h[i] > limit {
+			counts = append(counts, 1)
+			i++
+			continue
+		}
+		run := 1
+		for i+run < n && h[i+run] <= limit {
+			run++
+		}
+		counts = append(counts, pairUp(run)...)
+		i += run
+	}
+	if n <= fewestCells || len(counts) < fewestCells {
+		return halves(n)
+	}
+	return counts
+}
+
+// pairUp splits a run of cells into pairs and, when it is odd, one triple.
+func pairUp(run int) []int {
+	if run == 1 {
+		return []int{1}
+	}
+	counts := make([]int, run/2)
+	for i := range counts {
+		counts[i] = 2
+	}
+	counts[len(counts)-1] += run % 2
+	return counts
+}
+
+// halves splits up to four cells into two coarse ones, and leaves up to two
+// alone.
+func halves(n int) []int {
+	switch n {
+	case 1:
+		return []int{1}
+	case 2:
+		return []int{1, 1}
+	default:
+		return []int{n / 2, n - n/2}
+	}
+}
+
+func newMerge(fine *Axis, count []int) *merge {
+	n := len(count)
+	m := &merge{fine: fine, count: make([]int, n+2), node: make([]int, n+2), cell: make([]int, fine.N+2)}
+	widths := make([]float64, n)
+	m.trivial, m.allPairs = true, true
+	f := 1
+	for I := 1; I <= n; I++ {
+		m.count[I] = count[I-1]
+		m.node[I] = f
+		if count[I-1] != 1 {
+			m.trivial = false
+		}
+		if count[I-1] != 2 {
+			m.allPairs = false
+		}
+		if count[I-1] == 3 {
+			m.triples = append(m.triples, I)
+		}
+		for range count[I-1] {
+			m.cell[f] = I
+			widths[I-1] += fine.H[f]
+			f++
+		}
+	}
+	m.node[n+1] = f
+	m.cell[f] = n + 1
+	a := NewAxis(widths, fine.Lo, fine.Hi)
+	m.coarse = &a
+	m.setNodeWeights()
+	m.setCentreWeights()
+	return m
+}
+
+func (m *merge) setNodeWeights() {
+	m.nodeW = make([]float64, m.fine.N+2)
+	m.lowN, m.upN = make([]float64, m.coarse.N+2), make([]float64, m.coarse.N+2)
+	for I := 1; I <= m.coarse.N; I++ {
+		sum := 0.0
+		for f := m.node[I]; f < m.node[I+1]; f++ {
+			m.nodeW[f] = sum * m.coarse.RH[I]
+			sum += m.fine.H[f]
+		}
+		if m.count[I] > 1 {
+			m.upN[I] = 1 - m.nodeW[m.node[I]+1]
+			m.lowN[I+1] = m.nodeW[m.node[I+1]-1]
+		}
+	}
+	if m.fine.wraps() {
+		m.lowN[1] = m.lowN[m.coarse.N+1]
+	}
+}
+
+func (m *merge) setCentreWeights() {
+	m.low = make([]int, m.fine.N+2)
+	m.lowW, m.upW = make([]float64, m.fine.N+2), make([]float64, m.fine.N+2)
+	for I := 1; I <= m.coarse.N; I++ {
+		position := -0.5 * m.coarse.H[I] // of the fine centre, from the coarse one
+		for f := m.node[I]; f < m.node[I+1]; f++ {
+			position += 0.5 * m.fine.H[f]
+			m.setCentreWeight(f, I, position)
+			position += 0.5 * m.fine.H[f]
+		}
+	}
+}
+
+// setCentreWeight interpolates to a centre at a distance from that of its
+// coarse cell I.
+func (m *merge) setCentreWeight(f, I int, distance float64) {
+	a := m.coarse
+	low, end := I, a.Hi
+	if distance < 0 {
+		low, end = I-1, a.Lo
+	}
+	m.low[f] = low
+	far := 0.0 // weight of the neighbour of cell I
+	if distance < 0 {
+		far = -distance * a.RD[I]
+	} else {
+		far = distance * a.RD[I+1]
+	}
+	near := 1 - far
+	if atWall := low == 0 || low == a.N; atWall && end != Wrap {
+		far = 0
+		if end == Slip {
+			near = 1
+		}
+	}
+	m.lowW[f], m.upW[f] = near, far
+	if distance < 0 {
+		m.lowW[f], m.upW[f] = far, near
+	}
+}

@@ -1,0 +1,422 @@
+package multigrid
+
+import (
+	"context"
+	"math"
+
+	"example.org/overturn/stokes/internal/team"
+)
+
+// A Load is the right-hand side of the Stokes equations.
+type Load interface {
+	// AddRow adds to fx, fz and g row j of the body force and of the source of
+	// mass, integrated over the control volumes. Slots of walls are ignored.
+	AddRow(j int, fx, fz, g []float64)
+}
+
+// A Solver finds the flow under a load by generalised conjugate residuals
+// (Eisenstat, Elman & Schultz 1983) with one multigrid cycle as right
+// preconditioner.
+//
+// Residuals are measured by three dissipations,
+//
+//	|r|² = Σ rx²/Dx + rz²/Dz + rp² η/V,
+//
+// with D the diagonal of the momentum equations: dimensionally consistent, and
+// fair to stiff and weak regions alike. In the plain norm up to three times
+// as many iterations are needed.
+type Solver struct {
+	*Hierarchy
+	X Fields // start and answer; wall velocities are set by the caller
+
+	r     Fields
+	z, q  []Fields  // directions and what the operator makes of them
+	beta  []float64 // row k: coefficients of q[k] before orthogonalisation
+	norm  []float64 // |q[k]|²
+	alpha []float64
+	parts []float64 // of the present q along the earlier ones
+
+	load   Load
+	k      int // present direction
+	sums   []float64
+	totals []float64
+	step   float64
+	coeff  []float64
+
+	residualPass, applyPass, dotPass, updatePass, combinePass func(member int)
+}
+
+// The basis starts with room for shortBasis directions. When they are used up
+// without the residual having fallen by goodProgress, the basis grows instead
+// of starting anew: near rigid bodies a restart on a plateau is the end of
+// convergence.
+const (
+	shortBasis   = 5
+	goodProgress = 0.03
+)
+
+// A new q of which less than lossOfAngle, in square, is new is orthogonalised
+// twice; one of which less than parallel is new ends the round.
+const (
+	lossOfAngle = 1e-2
+	parallel    = 1e-14
+)
+
+// NewSolver makes a solver for the grid of x and z.
+func NewSolver(x, z Axis, t *team.Team) *Solver {
+	sv := &Solver{Hierarchy: NewHierarchy(x, z, t)}
+	l := sv.Finest()
+	sv.X, sv.r = newFields(l.size()), newFields(l.size())
+	sv.grow(shortBasis)
+	rows := func(work func(s *scratch, j int), begin func(s *scratch, j int)) func(int) {
+		return func(member int) {
+			blocks := sv.blocks[0]
+			if member >= blocks {
+				return
+			}
+			lo, hi := team.Block(l.Z.N, member, blocks)
+			s := sv.s[member]
+			if begin != nil {
+				begin(s, lo+1)
+			}
+			for j := lo + 1; j <= hi; j++ {
+				work(s, j)
+			}
+		}
+	}
+	sv.residualPass = rows(sv.residualRow, func(s *scratch, j int) { l.begin(s, sv.X, j) })
+	sv.applyPass = rows(sv.applyRow, func(s *scratch, j int) { l.begin(s, sv.z[sv.k], j) })
+	sv.dotPass = rows(sv.dotsRow, nil)
+	sv.updatePass = rows(sv.updateRow, nil)
+	sv.combinePass = rows(sv.combineRow, nil)
+	return sv
+}
+
+// grow extends the basis to m directions.
+func (sv *Solver) grow(m int) {
+	size := sv.Finest().size()
+	for len(sv.z) < m {
+		sv.z = append(sv.z, newFields(size))
+		sv.q = append(sv.q, newFields(size))
+	}
+	old, n := sv.beta, len(sv.norm)
+	sv.beta = make([]float64, m*m)
+	for k := range n {
+		copy(sv.beta[k*m:], old[k*n:(k+1)*n])
+	}
+	sv.norm = append(sv.norm, make([]float64, m-len(sv.norm))...)
+	sv.parts = append(sv.parts, make([]float64, m-len(sv.parts))...)
+	sv.alpha = append(sv.alpha, make([]float64, m-len(sv.alpha))...)
+	sv.coeff = append(sv.coeff, make([]float64, m-len(sv.coeff))...)
+	sv.totals = make([]float64, m+2)
+	sv.sums = make([]float64, (sv.Finest().Z.N+1)*(m+2))
+}
+
+// Norms are sizes of a residual.
+type Norms struct {
+	Weighted   float64 // of all three equations, see Solver
+	Momentum   float64 // root of the sum of momentum residual² / volume
+	Continuity float64 // the same for continuity
+}
+
+// Limits say when Solve stops.
+type Limits struct {
+	Target     float64 // weighted residual to reach
+	Iterations int
+	Basis      int // directions kept before the solver starts anew
+
+	// Watch, if not nil, is told the weighted residual before the first and
+	// after every iteration.
+	Watch func(iteration int, residual float64)
+}
+
+// Residual computes the residual of X under the load and returns its norms.
+func (sv *Solver) Residual(load Load) Norms {
+	sv.load = load
+	sv.Finest().WrapFields(sv.X)
+	sv.run(0, sv.residualPass)
+	t := sv.total(3)
+	return Norms{math.Sqrt(t[0]), math.Sqrt(t[1]), math.Sqrt(t[2])}
+}
+
+// Solve improves X until its residual reaches the target. It returns the
+// norms of the true residual of the answer and the number of iterations made.
+// The error is that of the context.
+func (sv *Solver) Solve(ctx context.Context, load Load, lim Limits) (Norms, int, error) {
+	norms := sv.Residual(load)
+	if lim.Watch != nil {
+		lim.Watch(0, norms.Weighted)
+	}
+	done := 0
+	for done < lim.Iterations && norms.Weighted > lim.Target {
+		before := norms.Weighted
+		n, err := sv.round(ctx, lim, done, before)
+		done += n
+		sv.combine()
+		if err != nil {
+			return sv.Residual(load), done, err
+		}
+		// The recursive residual drifts from the true one: start anew from
+		// the latter, and end only if that agrees.
+		norms = sv.Residual(load)
+		if n == 0 || !(norms.Weighted < before) {
+			break // rounding allows no better
+		}
+	}
+	return norms, done, nil
+}
+
+// round iterates until the target is reached or the basis is full, from a true
+// residual of size start.
+func (sv *Solver) round(ctx context.Context, lim Limits, done int, start float64) (int, error) {
+	sv.k = 0
+	residual, mark := start, start
+	n := 0
+	for done+n < lim.Iterations && residual > lim.Target {
+		if err := ctx.Err(); err != nil {
+			return n, err
+		}
+		if sv.k == len(sv.z) {
+			if residual < goodProgress*mark || len(sv.z) >= lim.Basis {
+				return n, nil
+			}
+			sv.grow(min(lim.Basis, 2*len(sv.z)))
+			mark = residual
+		}
+		next, ok := sv.iterate()
+		if !ok {
+			return n, nil
+		}
+		residual = next
+		n++
+		if lim.Watch != nil {
+			lim.Watch(done+n, residual)
+		}
+	}
+	return n, nil
+}
+
+// iterate adds one direction and returns the norm of the residual after it,
+// or false when the direction adds nothing.
+func (sv *Solver) iterate() (float64, bool) {
+	k, m := sv.k, len(sv.z)
+	sv.Precondition(sv.z[k], sv.r)
+	sv.run(0, sv.applyPass)
+	clear(sv.beta[k*m:][:k])
+	t := sv.total(k + 2)
+	rest, ok := sv.orthogonalise(t)
+	if !ok {
+		return 0, false
+	}
+	if rest < lossOfAngle*t[k] {
+		// Most of q was in the span of the others and what is left is
+		// inaccurate: take its parts out once more.
+		sv.step = 0
+		sv.run(0, sv.updatePass)
+		sv.run(0, sv.dotPass)
+		t = sv.total(k + 2)
+		if rest, ok = sv.orthogonalise(t); !ok {
+			return 0, false
+		}
+	}
+	sv.norm[k] = rest
+	sv.step = t[k+1] / rest
+	sv.alpha[k] = sv.step
+	sv.run(0, sv.updatePass)
+	sv.k++
+	return math.Sqrt(sv.total(1)[0]), true
+}
+
+// orthogonalise turns the inner products of q[k] with the earlier q into
+// coefficients, for updatePass to use, and returns the square of what will be
+// left of q, or false when that is nothing but rounding.
+func (sv *Solver) orthogonalise(t []float64) (float64, bool) {
+	k, m := sv.k, len(sv.z)
+	rest := t[k]
+	for i := range k {
+		b := t[i] / sv.norm[i]
+		sv.parts[i] = b
+		sv.beta[k*m+i] += b
+		rest -= b * t[i]
+	}
+	return rest, rest > parallel*t[k]
+}
+
+// combine adds to X the directions of this round. The orthogonalised
+// directions p obey p[k] = z[k] − Σ beta[k,i] p[i]; in terms of the z the sum
+// of alpha[k] p[k] follows by back substitution.
+func (sv *Solver) combine() {
+	k, m := sv.k, len(sv.z)
+	if k == 0 {
+		return
+	}
+	copy(sv.coeff, sv.alpha[:k])
+	for i := k - 1; i >= 0; i-- {
+		for j := range i {
+			sv.coeff[j] -= sv.beta[i*m+j] * sv.coeff[i]
+		}
+	}
+	sv.run(0, sv.combinePass)
+}
+
+// total adds up the first n sums of each row, in the order of rows whatever
+// the number of goroutines.
+func (sv *Solver) total(n int) []float64 {
+	t := sv.totals[:n]
+	clear(t)
+	width := len(sv.totals)
+	for j := 1; j <= sv.Finest().Z.N; j++ {
+		for i, v := range sv.sums[j*width:][:n] {
+			t[i] += v
+		}
+	}
+	return t
+}
+
+func (sv *Solver) rowSums(j int) []float64 {
+	width := len(sv.totals)
+	return sv.sums[j*width:][:width]
+}
+
+// residualRow computes row j of the residual of X.
+func (sv *Solver) residualRow(s *scratch, j int) {
+	l := sv.Finest()
+	l.operatorRow(s, sv.X, j)
+	sv.load.AddRow(j, s.rx, s.rz, s.rp)
+	n := l.X.N
+	if l.X.wraps() {
+		l.wrapX(s.rx)
+	} else {
+		s.rx[1], s.rx[n+1] = 0, 0
+	}
+	if j == 1 {
+		clear(s.rz)
+	}
+	rx, rz, rp := l.row(sv.r.X, j), l.row(sv.r.Z, j), l.row(sv.r.P, j)
+	copy(rx, s.rx)
+	copy(rz, s.rz)
+	copy(rp, s.rp)
+	ix, iz, eta := l.row(l.ix, j), l.row(l.iz, j), l.row(l.Eta, j)
+	rdz, rdn := l.Z.RH[j], l.Z.RD[j]
+	var w, u, c float64
+	for i := 1; i <= n; i++ {
+		xx, zz, pp := rx[i]*rx[i], rz[i]*rz[i], rp[i]*rp[i]*l.X.RH[i]*rdz
+		w += xx*ix[i] + zz*iz[i] + pp*eta[i]
+		u += xx*l.X.RD[i]*rdz + zz*l.X.RH[i]*rdn
+		c += pp
+	}
+	sums := sv.rowSums(j)
+	sums[0], sums[1], sums[2] = w, u, c
+}
+
+// applyRow stores in row j of q[k] what the operator makes of z[k], and the
+// inner products with the earlier q, itself and the residual.
+func (sv *Solver) applyRow(s *scratch, j int) {
+	l, k := sv.Finest(), sv.k
+	l.operatorRow(s, sv.z[k], j)
+	qx, qz, qp := l.row(sv.q[k].X, j), l.row(sv.q[k].Z, j), l.row(sv.q[k].P, j)
+	n := len(qx)
+	qz, qp = qz[:n], qp[:n]
+	rx, rz, rp := s.rx[:n], s.rz[:n], s.rp[:n]
+	for i := range qx {
+		qx[i], qz[i], qp[i] = -rx[i], -rz[i], -rp[i]
+	}
+	sv.dotsRow(s, j)
+}
+
+// dotsRow computes row j of the inner products of q[k] with the earlier q,
+// itself and the residual.
+func (sv *Solver) dotsRow(s *scratch, j int) {
+	l, k := sv.Finest(), sv.k
+	qx, qz, qp := l.row(sv.q[k].X, j), l.row(sv.q[k].Z, j), l.row(sv.q[k].P, j)
+	n := len(qx)
+	qz, qp = qz[:n], qp[:n]
+	wx, wz, wp := s.cx[:n], s.cz[:n], s.cp[:n]
+	ix, iz, eta, rh := l.row(l.ix, j)[:n], l.row(l.iz, j)[:n], l.row(l.Eta, j)[:n], l.X.RH[:n]
+	rdz := l.Z.RH[j]
+	for i := range qx {
+		wx[i], wz[i], wp[i] = qx[i]*ix[i], qz[i]*iz[i], qp[i]*eta[i]*(rh[i]*rdz)
+	}
+	sums := sv.rowSums(j)
+	for i := 0; i <= k; i++ {
+		sums[i] = l.dotRow(s, sv.q[i], j)
+	}
+	sums[k+1] = l.dotRow(s, sv.r, j)
+}
+
+// dotRow is the inner product of row j of u with the weighted row in s.
+func (l *Level) dotRow(s *scratch, u Fields, j int) float64 {
+	x, z, p := l.row(u.X, j), l.row(u.Z, j), l.row(u.P, j)
+	n := len(x) - 1
+	x, z, p = x[1:n], z[1:n], p[1:n]
+	wx, wz, wp := s.cx[1:n], s.cz[1:n], s.cp[1:n]
+	z, p, wx, wz, wp = z[:len(x)], p[:len(x)], wx[:len(x)], wz[:len(x)], wp[:len(x)]
+	var a, b, c float64
+	for i := range x {
+		a += x[i] * wx[i]
+		b += z[i] * wz[i]
+		c += p[i] * wp[i]
+	}
+	return a + b + c
+}
+
+// updateRow makes row j of q[k] orthogonal to the earlier ones and takes its
+// part out of the residual.
+func (sv *Solver) updateRow(_ *scratch, j int) {
+	l, k := sv.Finest(), sv.k
+	qx, qz, qp := l.row(sv.q[k].X, j), l.row(sv.q[k].Z, j), l.row(sv.q[k].P, j)
+	for i := range k {
+		b := -sv.parts[i]
+		addScaled(qx, b, l.row(sv.q[i].X, j))
+		addScaled(qz, b, l.row(sv.q[i].Z, j))
+		addScaled(qp, b, l.row(sv.q[i].P, j))
+	}
+	rx, rz, rp := l.row(sv.r.X, j), l.row(sv.r.Z, j), l.row(sv.r.P, j)
+	addScaled(rx, -sv.step, qx)
+	addScaled(rz, -sv.step, qz)
+	addScaled(rp, -sv.step, qp)
+	n := len(rx)
+	rz, rp = rz[:n], rp[:n]
+	ix, iz, eta, rh := l.row(l.ix, j)[:n], l.row(l.iz, j)[:n], l.row(l.Eta, j)[:n], l.X.RH[:n]
+	rdz := l.Z.RH[j]
+	var a, b, c float64
+	for i := 1; i < n-1; i++ {
+		a += rx[i] * rx[i] * ix[i]
+		b += rz[i] * rz[i] * iz[i]
+		c += rp[i] * rp[i] * (eta[i] * rh[i])
+	}
+	sv.rowSums(j)[0] = a + b + c*rdz
+}
+
+// combineRow adds the directions to row j of X.
+func (sv *Solver) combineRow(_ *scratch, j int) {
+	l := sv.Finest()
+	x, z, p := l.row(sv.X.X, j), l.row(sv.X.Z, j), l.row(sv.X.P, j)
+	n := l.X.N + 1
+	for i := range sv.k {
+		c := sv.coeff[i]
+		addScaled(x[1:n], c, l.row(sv.z[i].X, j)[1:n])
+		if j > 1 {
+			addScaled(z[1:n], c, l.row(sv.z[i].Z, j)[1:n])
+		}
+		addScaled(p[1:n], c, l.row(sv.z[i].P, j)[1:n])
+	}
+}
+
+func addScaled(dst []float64, c float64, src []float64) {
+	src = src[:len(dst)]
+	for i := range dst {
+		dst[i] += c * src[i]
+	}
+}
+
+// Operator calls use for each row of the momentum operator of X, integrated
+// over control volumes and padded as rows of a level are.
+func (sv *Solver) Operator(use func(j int, rx, rz []float64)) {
+	l, s := sv.Finest(), sv.s[0]
+	l.begin(s, sv.X, 1)
+	for j := 1; j <= l.Z.N; j++ {
+		l.operatorRow(s, sv.X, j)
+		use(j, s.rx, s.rz)
+	}
+}
