@@ -24,13 +24,12 @@ const (
 
 // The units of the table.
 const (
-	kgm3  = units.KilogramPerCubicMetre
-	perK  = units.PerKelvin
-	wmK   = units.WattPerMetreKelvin
-	jkgK  = units.JoulePerKilogramKelvin
-	pas   = units.PascalSecond
-	giga  = 1e9 * units.Pascal
-	kelvn = units.Temperature(1)
+	kgm3 = units.KilogramPerCubicMetre
+	perK = units.PerKelvin
+	wmK  = units.WattPerMetreKelvin
+	jkgK = units.JoulePerKilogramKelvin
+	pas  = units.PascalSecond
+	gpa  = units.Gigapascal
 )
 
 func computed[Q units.Quantity](v Q, digits int, source string) Property[Q] {
@@ -61,19 +60,19 @@ var presets = []Preset{
 	{
 		Name: "water-20C", Title: "water at 20 °C", Conditions: "293.15 K, 0.101325 MPa",
 		Note:         "IAPWS-IF97 gives a specific heat 1.8e-4 greater and an expansivity 9.5e-4 smaller, relatively",
-		Temperature:  293.15 * kelvn,
+		Temperature:  293.15,
 		Density:      computed(998.20715*kgm3, 7, iapws95),
 		Expansivity:  computed(2.068062e-4*perK, 5, iapws95),
 		Conductivity: computed(0.598012*wmK, 5, "IAPWS R15-11"),
 		SpecificHeat: computed(4184.051*jkgK, 6, iapws95),
 		Viscosity:    computed(1.001596e-3*pas, 5, "IAPWS R12-08"),
-		BulkModulus:  memory(2.19*giga, 2, "density times squared speed of sound, handbooks"),
+		BulkModulus:  memory(2.19*gpa, 2, "density times squared speed of sound, handbooks"),
 		Sensitivity:  Sensitivity{Viscosity: -0.0245, Expansivity: 0.051, Conductivity: 0.0029, SpecificHeat: -1.7e-4},
 	},
 	{
 		Name: "air-20C", Title: "dry air at 20 °C", Conditions: "293.15 K, 101325 Pa",
 		Note:         "an ideal gas would have the expansivity 1/T = 3.411e-3 per kelvin",
-		Temperature:  293.15 * kelvn,
+		Temperature:  293.15,
 		Density:      computed(1.204575*kgm3, 6, airEquation),
 		Expansivity:  computed(3.420988e-3*perK, 6, airEquation),
 		Conductivity: computed(2.58738e-2*wmK, 4, airFlow),
@@ -86,7 +85,7 @@ var presets = []Preset{
 		Name: "air-300K", Title: "air at 300 K", Conditions: "300 K, 1 atm",
 		Note: "viscosity is Pr k/c_p with the Prandtl number 0.708 of the source; its kinematic viscosity of " +
 			"16.84e-6 m²/s contradicts that number by 7 %",
-		Temperature:  300 * kelvn,
+		Temperature:  300,
 		Density:      read(1.1774*kgm3, 3, gases),
 		Expansivity:  computed(perK/300, 3, "1/T of an ideal gas"),
 		Conductivity: read(0.02624*wmK, 3, gases),
@@ -99,55 +98,55 @@ var presets = []Preset{
 		Name: "ice-273K", Title: "ice Ih at its melting point", Conditions: "273.15 K, 0.101325 MPa",
 		Note: "conductivity is not settled: the range is from 567/T to 651/T W/(m K) (Klinger 1980; Petrenko & " +
 			"Whitworth 1999; both from memory). Viscosity depends on stress, grain size and temperature: fill it in",
-		Temperature:  273.15 * kelvn,
+		Temperature:  273.15,
 		Density:      computed(916.7218*kgm3, 6, iceEquation),
 		Expansivity:  computed(1.59840e-4*perK, 6, iceEquation),
 		Conductivity: memory(2.2*wmK, 2, handbooks).between(2.08*wmK, 2.38*wmK),
 		SpecificHeat: computed(2096.695*jkgK, 6, iceEquation),
-		BulkModulus:  memory(8.7*giga, 1, handbooks),
+		BulkModulus:  memory(8.7*gpa, 1, handbooks),
 		Sensitivity:  Sensitivity{Conductivity: -0.0037, Expansivity: 0.0032, SpecificHeat: 0.0035},
 	},
 	{
 		Name: "ice-260K", Title: "ice Ih at 260 K", Conditions: "260 K, 0.101325 MPa",
 		Note: "conductivity is not settled: the range is from 567/T to 651/T W/(m K) (Klinger 1980; Petrenko & " +
 			"Whitworth 1999; both from memory). Viscosity depends on stress, grain size and temperature: fill it in",
-		Temperature:  260 * kelvn,
+		Temperature:  260,
 		Density:      computed(918.6115*kgm3, 6, iceEquation),
 		Expansivity:  computed(1.53275e-4*perK, 6, iceEquation),
 		Conductivity: memory(2.34*wmK, 2, "middle of the two laws").between(2.18*wmK, 2.50*wmK),
 		SpecificHeat: computed(1999.981*jkgK, 6, iceEquation),
-		BulkModulus:  memory(8.9*giga, 1, handbooks),
+		BulkModulus:  memory(8.9*gpa, 1, handbooks),
 		Sensitivity:  Sensitivity{Conductivity: -0.0038, Expansivity: 0.0033, SpecificHeat: 0.0037},
 	},
 	{
 		Name: "glycerol-20C", Title: "pure glycerol at 20 °C", Conditions: "293.15 K, 1 atm",
 		Note:         "it takes up water from air, and each percent of water takes away a good part of its viscosity",
-		Temperature:  293.15 * kelvn,
+		Temperature:  293.15,
 		Density:      memory(1261*kgm3, 3, glycerol),
-		Expansivity:  memory(5.0e-4*perK, 2, glycerol),
+		Expansivity:  memory(5.0e-4*perK, 3, glycerol),
 		Conductivity: memory(0.285*wmK, 3, glycerol),
-		SpecificHeat: memory(2400*jkgK, 2, glycerol),
+		SpecificHeat: memory(2400*jkgK, 3, glycerol),
 		Viscosity:    memory(1.412*pas, 3, glycerol),
-		BulkModulus:  memory(4.6*giga, 1, "density times squared speed of sound, handbooks"),
+		BulkModulus:  memory(4.6*gpa, 1, "density times squared speed of sound, handbooks"),
 		Sensitivity:  Sensitivity{Viscosity: -0.092},
 	},
 	{
 		Name: "silicone-oil-1000cSt", Title: "silicone oil, 1000 cSt", Conditions: "298 K, 1 atm",
 		Note:         "polydimethylsiloxane; the viscosity is the nominal one of the grade",
-		Temperature:  298 * kelvn,
+		Temperature:  298,
 		Density:      memory(970*kgm3, 2, silicone),
 		Expansivity:  memory(9.4e-4*perK, 2, silicone).between(9.0e-4*perK, 9.7e-4*perK),
 		Conductivity: memory(0.16*wmK, 2, silicone),
 		SpecificHeat: memory(1460*jkgK, 2, silicone).between(1370*jkgK, 1550*jkgK),
 		Viscosity:    memory(0.97*pas, 2, silicone),
-		BulkModulus:  memory(0.95*giga, 1, "density times squared speed of sound, handbooks"),
+		BulkModulus:  memory(0.95*gpa, 1, "density times squared speed of sound, handbooks"),
 		Sensitivity:  Sensitivity{Viscosity: -0.02},
 	},
 	{
 		Name: "syrup-20C", Title: "golden or glucose syrup at 20 °C", Conditions: "about 20 °C, 1 atm",
 		Note: "of low confidence. Viscosity is tens of Pa s and differs by batch, brand and water content, and so " +
 			"does its law of temperature: measure yours and fill it in",
-		Temperature:  293.15 * kelvn,
+		Temperature:  293.15,
 		Density:      memory(1430*kgm3, 1, syrup).between(1420*kgm3, 1440*kgm3),
 		Expansivity:  memory(4.5e-4*perK, 1, syrup).between(4.0e-4*perK, 5e-4*perK),
 		Conductivity: memory(0.365*wmK, 1, syrup).between(0.35*wmK, 0.38*wmK),
@@ -157,7 +156,7 @@ var presets = []Preset{
 		Name: "basalt-melt", Title: "basaltic melt near its liquidus", Conditions: "about 1200 °C, 1 atm, poor in volatiles",
 		Note: "each value is good to 20 % at best. Viscosity is 10 to 100 Pa s in melts of hot-spot volcanoes and " +
 			"100 to 1000 Pa s in arc basalts with crystals; the range is the first",
-		Temperature:  1473.15 * kelvn,
+		Temperature:  1473.15,
 		Density:      memory(2700*kgm3, 1, basalt),
 		Expansivity:  memory(6e-5*perK, 1, basalt).between(5e-5*perK, 7e-5*perK),
 		Conductivity: memory(1.25*wmK, 1, basalt).between(1.0*wmK, 1.5*wmK),
@@ -173,7 +172,7 @@ var presets = []Preset{
 		Conductivity: read(3*wmK, 1, mantleTable).between(3*wmK, 4.5*wmK),
 		SpecificHeat: read(1200*jkgK, 2, mantleTable).between(1100*jkgK, 1250*jkgK),
 		Viscosity:    memory(1e21*pas, 1, mantleUse).decades(1e19*pas, 1e21*pas),
-		BulkModulus:  memory(130*giga, 1, seismic),
+		BulkModulus:  memory(130*gpa, 1, seismic),
 	},
 	{
 		Name: "upper-mantle-rounded", Title: "upper mantle of diffusivity 1e-6 m²/s", Conditions: "constant properties, diffusivity given",
@@ -184,7 +183,7 @@ var presets = []Preset{
 		Conductivity: computed(3.96*wmK, 1, "κ ρ c_p, "+mantleTable),
 		SpecificHeat: read(1200*jkgK, 2, mantleTable),
 		Viscosity:    memory(1e21*pas, 1, mantleUse).decades(1e19*pas, 1e21*pas),
-		BulkModulus:  memory(130*giga, 1, seismic),
+		BulkModulus:  memory(130*gpa, 1, seismic),
 	},
 	{
 		Name: "lithosphere", Title: "oceanic lithosphere of a cooling plate", Conditions: "constants of the plate model",
@@ -193,7 +192,7 @@ var presets = []Preset{
 		Expansivity:  memory(3.1e-5*perK, 2, plate),
 		Conductivity: memory(3.138*wmK, 4, plate),
 		SpecificHeat: memory(1171*jkgK, 4, plate),
-		BulkModulus:  memory(130*giga, 1, seismic),
+		BulkModulus:  memory(130*gpa, 1, seismic),
 	},
 	{
 		Name: "lower-mantle", Title: "lower mantle", Conditions: "ranges over depth",
@@ -203,7 +202,7 @@ var presets = []Preset{
 		Conductivity: memory(7.5*wmK, 1, mantleUse).between(5*wmK, 10*wmK),
 		SpecificHeat: memory(1250*jkgK, 1, mantleUse),
 		Viscosity:    memory(1.7e22*pas, 1, mantleUse).decades(3e21*pas, 1e23*pas),
-		BulkModulus:  memory(480*giga, 1, seismic),
+		BulkModulus:  memory(480*gpa, 1, seismic),
 	},
 	{
 		Name: "outer-core", Title: "liquid iron of the outer core", Conditions: "ranges from top to bottom",
@@ -211,36 +210,36 @@ var presets = []Preset{
 		Density:      memory(11000*kgm3, 1, seismic).between(9900*kgm3, 12170*kgm3),
 		Expansivity:  memory(1.5e-5*perK, 1, "values in use in core papers").between(1.2e-5*perK, 1.8e-5*perK),
 		Conductivity: read(130*wmK, 1, "Pozzo, Davies, Gubbins & Alfè (2013), abstract").between(100*wmK, 160*wmK),
-		SpecificHeat: read(750*jkgK, 2, "parameter table of doi 10.1186/s40645-020-00374-8, after Labrosse (2015)"),
+		SpecificHeat: read(750*jkgK, 1, "parameter table of doi 10.1186/s40645-020-00374-8, after Labrosse (2015)"),
 		Viscosity:    memory(1.1e-2*pas, 1, "values in use in core papers"),
-		BulkModulus:  memory(970*giga, 1, seismic),
+		BulkModulus:  memory(970*gpa, 1, seismic),
 	},
 	{
 		Name: "halite", Title: "rock salt", Conditions: "300 K, 1 atm",
 		Note:         "conductivity falls roughly as 1/T. The range of viscosity is that of damp rock salt at low stress",
-		Temperature:  300 * kelvn,
-		Density:      memory(2165*kgm3, 3, handbooks),
+		Temperature:  300,
+		Density:      memory(2165*kgm3, 2, handbooks),
 		Expansivity:  memory(1.2e-4*perK, 2, handbooks),
 		Conductivity: memory(6*wmK, 1, handbooks),
 		SpecificHeat: memory(865*jkgK, 2, handbooks),
 		Viscosity:    memory(3e18*pas, 1, handbooks).decades(1e17*pas, 1e20*pas),
-		BulkModulus:  memory(25*giga, 1, handbooks),
+		BulkModulus:  memory(25*gpa, 1, handbooks),
 		Sensitivity:  Sensitivity{Conductivity: -0.0033},
 	},
 	{
 		Name: "mercury-273K", Title: "mercury at 273 K", Conditions: "273 K",
-		Temperature:  273 * kelvn,
-		Density:      read(13595*kgm3, 4, metals),
+		Temperature:  273,
+		Density:      read(13595*kgm3, 3, metals),
 		Expansivity:  memory(1.81e-4*perK, 3, "handbooks, at 293 K"),
 		Conductivity: read(8.18*wmK, 3, metals),
-		SpecificHeat: read(140*jkgK, 2, metals),
+		SpecificHeat: read(140*jkgK, 3, metals),
 		Viscosity:    computed(13595*1.240e-7*pas, 3, metals),
-		BulkModulus:  memory(28.5*giga, 2, "density times squared speed of sound, handbooks"),
+		BulkModulus:  memory(28.5*gpa, 2, "density times squared speed of sound, handbooks"),
 	},
 	{
 		Name: "mercury-600K", Title: "mercury at 600 K", Conditions: "600 K",
-		Temperature:  600 * kelvn,
-		Density:      read(12809*kgm3, 4, metals),
+		Temperature:  600,
+		Density:      read(12809*kgm3, 3, metals),
 		Expansivity:  computed(1.876e-4*perK, 2, "(13595 − 12809) kg/m³ over 327 K, by the density at 600 K; "+metals),
 		Conductivity: read(11.95*wmK, 3, metals),
 		SpecificHeat: read(136*jkgK, 3, metals),
@@ -249,7 +248,7 @@ var presets = []Preset{
 	{
 		Name: "sodium-366K", Title: "liquid sodium at 366 K", Conditions: "366 K (200 °F)",
 		Note:         "the source lists it as liquid, though sodium melts at 371 K",
-		Temperature:  366 * kelvn,
+		Temperature:  366,
 		Density:      read(929.1*kgm3, 3, metals),
 		Expansivity:  memory(2.6e-4*perK, 2, "handbooks, near 400 K"),
 		Conductivity: read(86.2*wmK, 3, metals),
@@ -258,9 +257,9 @@ var presets = []Preset{
 	},
 	{
 		Name: "sodium-977K", Title: "liquid sodium at 977 K", Conditions: "977 K",
-		Temperature:  977 * kelvn,
+		Temperature:  977,
 		Density:      read(778.5*kgm3, 3, metals),
-		Expansivity:  computed(3.17e-4*perK, 2, "(929.1 − 778.5) kg/m³ over 611 K, by the density at 977 K; "+metals),
+		Expansivity:  computed(3.166e-4*perK, 2, "(929.1 − 778.5) kg/m³ over 611 K, by the density at 977 K; "+metals),
 		Conductivity: read(59.7*wmK, 3, metals),
 		SpecificHeat: read(1260*jkgK, 3, metals),
 		Viscosity:    computed(778.5*2.285e-7*pas, 3, metals),
@@ -268,7 +267,7 @@ var presets = []Preset{
 	{
 		Name: "nak56-366K", Title: "sodium-potassium alloy 56/44", Conditions: "366 K",
 		Note:         "the source gives no expansivity: fill it in",
-		Temperature:  366 * kelvn,
+		Temperature:  366,
 		Density:      read(887.4*kgm3, 3, metals),
 		Conductivity: read(25.6*wmK, 3, metals),
 		SpecificHeat: read(1130*jkgK, 3, metals),
@@ -276,8 +275,8 @@ var presets = []Preset{
 	},
 	{
 		Name: "gallium-303K", Title: "gallium just above its melting point", Conditions: "302.9 K",
-		Temperature:  302.9 * kelvn,
-		Density:      memory(6095*kgm3, 3, gallium),
+		Temperature:  302.9,
+		Density:      memory(6095*kgm3, 2, gallium),
 		Expansivity:  memory(1.2e-4*perK, 2, gallium),
 		Conductivity: memory(29.5*wmK, 2, gallium).between(28*wmK, 31*wmK),
 		SpecificHeat: memory(397*jkgK, 2, gallium),

@@ -1,8 +1,11 @@
 package boussinesq
 
 import (
+	"encoding/csv"
 	"fmt"
 	"math"
+	"os"
+	"strconv"
 	"testing"
 
 	"example.org/overturn/units"
@@ -67,50 +70,52 @@ func TestPresetsDeriveWhatTheirSourcesSay(t *testing.T) {
 	}
 }
 
-// The values of a source come through to the material unchanged.
-func TestPresetValues(t *testing.T) {
-	type row struct{ rho, alpha, k, cp, mu float64 }
-	for name, want := range map[string]row{
-		"water-20C":            {998.20715, 2.068062e-4, 0.598012, 4184.051, 1.001596e-3},
-		"air-20C":              {1.204575, 3.420988e-3, 2.58738e-2, 1006.144, 1.820568e-5},
-		"air-300K":             {1.1774, 1. / 300, 0.02624, 1005.7, 1.8473e-5},
-		"ice-273K":             {916.7218, 1.59840e-4, 2.2, 2096.695, 0},
-		"ice-260K":             {918.6115, 1.53275e-4, 2.34, 1999.981, 0},
-		"glycerol-20C":         {1261, 5e-4, 0.285, 2400, 1.412},
-		"silicone-oil-1000cSt": {970, 9.4e-4, 0.16, 1460, 0.97},
-		"syrup-20C":            {1430, 4.5e-4, 0.365, 2300, 0},
-		"basalt-melt":          {2700, 6e-5, 1.25, 1450, 30},
-		"upper-mantle":         {3300, 3e-5, 3, 1200, 1e21},
-		"upper-mantle-rounded": {3300, 3e-5, 3.96, 1200, 1e21},
-		"lithosphere":          {3330, 3.1e-5, 3.138, 1171, 0},
-		"lower-mantle":         {5000, 1.75e-5, 7.5, 1250, 1.7e22},
-		"outer-core":           {11000, 1.5e-5, 130, 750, 1.1e-2},
-		"halite":               {2165, 1.2e-4, 6, 865, 3e18},
-		"mercury-273K":         {13595, 1.81e-4, 8.18, 140, 13595 * 1.240e-7},
-		"mercury-600K":         {12809, 1.876e-4, 11.95, 136, 12809 * 0.711e-7},
-		"sodium-366K":          {929.1, 2.6e-4, 86.2, 1380, 929.1 * 7.516e-7},
-		"sodium-977K":          {778.5, 3.17e-4, 59.7, 1260, 778.5 * 2.285e-7},
-		"nak56-366K":           {887.4, 0, 25.6, 1130, 887.4 * 6.522e-7},
-		"gallium-303K":         {6095, 1.2e-4, 29.5, 397, 1.95e-3},
-	} {
-		p, err := ByName(name)
+// The table agrees with a list of the same values, made apart from the same
+// sources.
+func TestPresetsAgreeWithTheirSources(t *testing.T) {
+	file, err := os.Open("testdata/materials.csv")
+	require.NoError(t, err)
+	defer file.Close()
+	rows, err := csv.NewReader(file).ReadAll()
+	require.NoError(t, err)
+	listed := map[string]int{}
+	for _, row := range rows[1:] {
+		what := row[0] + " " + row[1]
+		p, err := ByName(row[0])
 		require.NoError(t, err)
-		m := p.Material()
-		got := row{float64(m.Density), float64(m.Expansivity), float64(m.Conductivity), float64(m.SpecificHeat), float64(m.Viscosity)}
-		if want != got {
-			inRelative(t, want.rho, got.rho, 0, name+" density")
-			inRelative(t, want.alpha, got.alpha, 1e-15, name+" expansivity")
-			inRelative(t, want.k, got.k, 0, name+" conductivity")
-			inRelative(t, want.cp, got.cp, 0, name+" specific heat")
-			inRelative(t, want.mu, got.mu, 1e-15, name+" viscosity")
-		}
+		f, ok := properties(p)[row[1]]
+		require.True(t, ok, what)
+		inRelative(t, number(t, row[2]), f.value, math.Pow(10, -float64(max(f.digits, 3))), what)
+		assert.Equal(t, number(t, row[3]), f.low, what)
+		assert.Equal(t, number(t, row[4]), f.high, what)
+		assert.Equal(t, row[5], strconv.Itoa(f.digits), what)
+		assert.Equal(t, row[6], f.status.String(), what)
+		listed[row[0]]++
 	}
-	assert.Len(t, Presets(), 21)
+	assert.Len(t, listed, 21)
+	for _, p := range Presets() {
+		known := 0
+		for name, f := range properties(p) {
+			if f.status != Unknown && name != "bulk modulus" {
+				known++
+			}
+		}
+		assert.Equal(t, known, listed[p.Name], p.Name)
+	}
 }
 
-// facts are what TestPresetsAreWellFormed asks of each property.
+// number parses a field that may be empty.
+func number(t *testing.T, text string) float64 {
+	if text == "" {
+		return 0
+	}
+	x, err := strconv.ParseFloat(text, 64)
+	require.NoError(t, err)
+	return x
+}
+
+// facts are a property, its type forgotten.
 type facts struct {
-	name             string
 	value, low, high float64
 	shape            Shape
 	digits           int
@@ -119,10 +124,21 @@ type facts struct {
 	hasRange         bool
 }
 
-func factsOf[Q units.Quantity](name string, p Property[Q]) facts {
+func factsOf[Q units.Quantity](p Property[Q]) facts {
 	return facts{
-		name, float64(p.Value), float64(p.Range.Low), float64(p.Range.High), p.Range.Shape,
+		float64(p.Value), float64(p.Range.Low), float64(p.Range.High), p.Range.Shape,
 		p.Digits, p.Status, p.Source, !p.Range.IsZero(),
+	}
+}
+
+func properties(p Preset) map[string]facts {
+	return map[string]facts{
+		"density":       factsOf(p.Density),
+		"expansivity":   factsOf(p.Expansivity),
+		"conductivity":  factsOf(p.Conductivity),
+		"specific heat": factsOf(p.SpecificHeat),
+		"viscosity":     factsOf(p.Viscosity),
+		"bulk modulus":  factsOf(p.BulkModulus),
 	}
 }
 
@@ -134,14 +150,11 @@ func TestPresetsAreWellFormed(t *testing.T) {
 		assert.NotEmpty(t, p.Title, p.Name)
 		assert.NotEmpty(t, p.Conditions, p.Name)
 		complete := true
-		for _, f := range []facts{
-			factsOf("density", p.Density), factsOf("expansivity", p.Expansivity), factsOf("conductivity", p.Conductivity),
-			factsOf("specific heat", p.SpecificHeat), factsOf("viscosity", p.Viscosity), factsOf("bulk modulus", p.BulkModulus),
-		} {
-			what := p.Name + " " + f.name
+		for name, f := range properties(p) {
+			what := p.Name + " " + name
 			if f.status == Unknown {
-				complete = complete && f.name == "bulk modulus"
-				assert.Equal(t, facts{name: f.name}, f, what)
+				complete = complete && name == "bulk modulus"
+				assert.Zero(t, f, what)
 				continue
 			}
 			assert.Positive(t, f.value, what)
@@ -239,10 +252,78 @@ func TestStatusInWords(t *testing.T) {
 		fmt.Sprint([]Status{Unknown, Computed, Read, FromMemory, Status(9)}))
 }
 
-// The sensitivities of water against those of steam-table values 5 K either
-// side, from memory: μ 1.138e-3 and 0.890e-3 Pa s, α 1.51e-4 and 2.57e-4 1/K.
-func TestWaterSensitivity(t *testing.T) {
-	s := water(t).Sensitivity
-	assert.InDelta(t, math.Log(0.890/1.138)/10, float64(s.Viscosity), 5e-4)
-	assert.InDelta(t, math.Log(2.57/1.51)/10, float64(s.Expansivity), 3e-3)
+// ρ c² with a speed of sound from memory, or what PREM (Dziewonski & Anderson
+// 1981, from memory) has in the layer.
+func TestBulkModuli(t *testing.T) {
+	for name, speed := range map[string]float64{
+		"water-20C": 1482, "air-20C": 343.2, "air-300K": 347.2, "glycerol-20C": 1920,
+		"silicone-oil-1000cSt": 990, "mercury-273K": 1450,
+	} {
+		p, err := ByName(name)
+		require.NoError(t, err)
+		inRelative(t, float64(p.Density.Value)*speed*speed, float64(p.BulkModulus.Value), 0.02, name)
+	}
+	for name, gpa := range map[string][2]float64{
+		"upper-mantle": {127, 174}, "upper-mantle-rounded": {127, 174}, "lithosphere": {127, 132},
+		"lower-mantle": {300, 656}, "outer-core": {644, 1305},
+		"ice-273K": {8.4, 9}, "ice-260K": {8.6, 9.2}, "halite": {24, 26},
+	} {
+		p, err := ByName(name)
+		require.NoError(t, err)
+		k := p.BulkModulus.Value.In(units.Gigapascal)
+		assert.True(t, gpa[0] <= k && k <= gpa[1], "%s: %v GPa", name, k)
+	}
+}
+
+// d ln x/dT from what is known of each property otherwise: powers of the
+// temperature, a second preset, a law, or steam-table values from memory.
+func TestSensitivities(t *testing.T) {
+	byName := func(name string) Preset {
+		p, err := ByName(name)
+		require.NoError(t, err)
+		return p
+	}
+	cold, warm := byName("ice-260K"), byName("ice-273K")
+	interval := float64(warm.Temperature.Sub(cold.Temperature))
+	expansivity := math.Log(float64(warm.Expansivity.Value)/float64(cold.Expansivity.Value)) / interval
+	heat := math.Log(float64(warm.SpecificHeat.Value)/float64(cold.SpecificHeat.Value)) / interval
+	for _, tt := range []struct {
+		what      string
+		got       units.Expansivity
+		want, tol float64
+	}{
+		{"ice-273K k ~ 1/T", warm.Sensitivity.Conductivity, -1 / 273.15, 1e-4},
+		{"ice-260K k ~ 1/T", cold.Sensitivity.Conductivity, -1 / 260., 1e-4},
+		{"ice-273K α", warm.Sensitivity.Expansivity, expansivity, 2e-4},
+		{"ice-260K α", cold.Sensitivity.Expansivity, expansivity, 2e-4},
+		{"ice-273K c_p", warm.Sensitivity.SpecificHeat, heat, 2e-4},
+		{"ice-260K c_p", cold.Sensitivity.SpecificHeat, heat, 2e-4},
+		{"air-20C α ~ 1/T", byName("air-20C").Sensitivity.Expansivity, -1 / 293.15, 1e-4},
+		{"air-300K α ~ 1/T", byName("air-300K").Sensitivity.Expansivity, -1 / 300., 1e-4},
+		{"air-20C μ ~ T^0.76", byName("air-20C").Sensitivity.Viscosity, 0.76 / 293.15, 1e-4},
+		{"air-300K μ ~ T^0.76", byName("air-300K").Sensitivity.Viscosity, 0.76 / 300., 1e-4},
+		{"air-20C k ~ T^0.9", byName("air-20C").Sensitivity.Conductivity, 0.9 / 293.15, 1e-4},
+		{"air-300K k ~ T^0.9", byName("air-300K").Sensitivity.Conductivity, 0.9 / 300., 1e-4},
+		{"water μ, 15 and 25 °C", water(t).Sensitivity.Viscosity, math.Log(0.890/1.138) / 10, 5e-4},
+		{"water α, 15 and 25 °C", water(t).Sensitivity.Expansivity, math.Log(2.57/1.51) / 10, 3e-3},
+		{"water k, 15 and 25 °C", water(t).Sensitivity.Conductivity, math.Log(0.6065/0.589) / 10, 1e-4},
+		{"water c_p, 15 and 25 °C", water(t).Sensitivity.SpecificHeat, math.Log(4181.3/4188.5) / 10, 1e-5},
+		{"halite k ~ 1/T", byName("halite").Sensitivity.Conductivity, -1 / 300., 1e-4},
+		{"silicone oil μ, factor 0.4 from 311 to 372 K", byName("silicone-oil-1000cSt").Sensitivity.Viscosity, math.Log(0.4) / 61, 6e-3},
+	} {
+		assert.InDelta(t, tt.want, float64(tt.got), tt.tol, tt.what)
+	}
+}
+
+// The temperature of each preset is the one in its conditions.
+func TestPresetTemperatures(t *testing.T) {
+	want := map[string]units.Temperature{
+		"water-20C": 293.15, "air-20C": 293.15, "air-300K": 300, "ice-273K": 273.15, "ice-260K": 260,
+		"glycerol-20C": 293.15, "silicone-oil-1000cSt": 298, "syrup-20C": 293.15, "basalt-melt": 1473.15,
+		"halite": 300, "mercury-273K": 273, "mercury-600K": 600, "sodium-366K": 366, "sodium-977K": 977,
+		"nak56-366K": 366, "gallium-303K": 302.9,
+	}
+	for _, p := range Presets() {
+		assert.Equal(t, want[p.Name], p.Temperature, p.Name)
+	}
 }
