@@ -19,8 +19,11 @@ type Core struct {
 	PlumeTime float64
 	// RootShear is ∫ √|∂u/∂z| dx over one rigid plate; zero at a free one.
 	RootShear float64
-	// MeanStream is the mean of ψ over the roll, known for an inviscid core.
+	// MeanStream is the mean of ψ over the roll, for an inviscid core.
 	MeanStream float64
+	// MeanSquareSpeed is the mean of |u|² over the roll, for a viscous core
+	// between free plates.
+	MeanSquareSpeed float64
 }
 
 // Inviscid returns the core of uniform vorticity one, ∇²ψ = -1 with ψ = 0 all
@@ -77,7 +80,35 @@ func Free(a float64) (Core, error) {
 	}
 	speed := product(response, vorticity)
 	plate := product(e.across(1, a), vorticity)
-	return Core{PlateTime: a * e.integral(plate), PlumeTime: e.integral(speed)}, nil
+	return Core{
+		PlateTime: a * e.integral(plate), PlumeTime: e.integral(speed),
+		MeanSquareSpeed: e.meanSquareSpeed(vorticity, a),
+	}, nil
+}
+
+// meanSquareSpeed returns ⟨|u|²⟩ = ⟨ψω⟩ of a roll of width a between free plates.
+// A sine mode of the plume vorticity with amplitude w and q = ka/2 adds
+//
+//	w²/(8ak³) [tanh q + q (2q tanh q - 1)/cosh²q].
+//
+// The amplitudes fall like n^(-1/2), which closes the sum.
+func (e *edge) meanSquareSpeed(vorticity []float64, a float64) float64 {
+	const last = 61
+	sum, term := 0.0, 0.0
+	t, f := e.refined(vorticity, 10)
+	for n := 1; n <= last; n += 2 {
+		k := float64(n) * math.Pi
+		amplitude := 0.0
+		for i := range t {
+			amplitude += f[i] * math.Sin(k/(1+math.Exp(-t[i])))
+		}
+		amplitude *= 2 * (t[1] - t[0])
+		q := k * a / 2
+		sech := 1 / math.Cosh(q)
+		term = amplitude * amplitude / (8 * a * k * k * k) * (math.Tanh(q) + q*(2*q*math.Tanh(q)-1)*sech*sech)
+		sum += term
+	}
+	return sum + term*last/6
 }
 
 // Rigid returns the viscous core between no-slip plates at infinite Prandtl

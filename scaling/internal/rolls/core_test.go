@@ -17,6 +17,29 @@ func TestFreeReference(t *testing.T) {
 	require.InEpsilon(t, 0.38685591, c.PlumeTime, 3e-8)
 }
 
+// ⟨|u|²⟩ of a single mode, ψ = sinh-type between the plumes, by quadrature of the
+// flow itself.
+func TestMeanSquareSpeedOfOneMode(t *testing.T) {
+	const a, k = 0.8, 3 * math.Pi
+	e := newEdge(0.15)
+	w := make([]float64, len(e.t))
+	for i, s := range e.s {
+		w[i] = math.Sin(k*s) * e.root[i]
+	}
+	// ψ(x) sin kz: the mean over z of u² + w² is (k²ψ² + ψ'²)/2.
+	psi := func(x float64) float64 {
+		return ((a-x)*math.Sinh(k*x) + x*math.Sinh(k*(a-x))) / (4 * k * math.Pow(math.Cosh(k*a/2), 2))
+	}
+	sum := 0.0
+	const n = 4000
+	for i := range n {
+		x := (float64(i) + 0.5) * a / n
+		d := (psi(x+1e-5) - psi(x-1e-5)) / 2e-5
+		sum += (k*k*psi(x)*psi(x) + d*d) / 2 / n
+	}
+	require.InEpsilon(t, sum, e.meanSquareSpeed(w, a), 3e-6)
+}
+
 // A finer grid changes nothing: the error falls exponentially.
 func TestFreeIsResolved(t *testing.T) {
 	for _, a := range []float64{MinWidth, 0.3, 1, 3, MaxFreeWidth} {
@@ -27,6 +50,7 @@ func TestFreeIsResolved(t *testing.T) {
 		require.NoError(t, err)
 		require.InEpsilon(t, e.integral(product(e.alongside(a), w)), c.PlumeTime, 1e-10, "a = %g", a)
 		require.InEpsilon(t, a*e.integral(product(e.across(1, a), w)), c.PlateTime, 1e-9, "a = %g", a)
+		require.InEpsilon(t, e.meanSquareSpeed(w, a), c.MeanSquareSpeed, 2e-6, "a = %g", a)
 	}
 }
 

@@ -60,6 +60,32 @@ func (e *edge) rootIntegral(f []float64) float64 {
 	return sum * e.step
 }
 
+// refined returns the density in t of a vorticity, f ds/dt, on a grid some times
+// as fine, by band-limited interpolation.
+func (e *edge) refined(f []float64, times int) (t, density []float64) {
+	n := len(e.t)
+	t, density = make([]float64, (n-1)*times+1), make([]float64, (n-1)*times+1)
+	sine := make([]float64, times) // of the fractions of a step
+	for k := range sine {
+		sine[k] = math.Sin(math.Pi * float64(k) / float64(times))
+	}
+	for i := range t {
+		whole, part := i/times, i%times
+		t[i] = e.t[0] + float64(i)*e.step/float64(times)
+		if part == 0 {
+			density[i] = f[whole] * e.root[whole]
+			continue
+		}
+		sum := 0.0
+		for j := range n {
+			distance := float64(whole-j) + float64(part)/float64(times)
+			sum += sign(whole-j) * f[j] * e.root[j] / distance
+		}
+		density[i] = sum * sine[part] / math.Pi
+	}
+	return t, density
+}
+
 // alongside returns the matrix that takes the vorticity of two opposite edges
 // of unit length and distance d (the other two free of vorticity) to the speed
 // along the same edges. In sine modes of wavenumber k it is
