@@ -65,12 +65,13 @@ func (l Layer) SuperadiabaticDrop(t units.Temperature) (units.TemperatureDiffere
 
 func (l Layer) dissipationNumber() float64 { return l.adiabaticRate() * float64(l.Depth) }
 
-// adiabaticRate returns α g/c_p, per metre. Expm1 keeps the digits of a drop
-// that is a small part of t.
+// adiabaticRate returns α g/c_p, per metre.
 func (l Layer) adiabaticRate() float64 {
 	return float64(l.Material.Expansivity) * float64(l.Gravity) / float64(l.Material.SpecificHeat)
 }
 
+// adiabaticDrop uses Expm1 to keep the digits of a drop that is a small part
+// of t.
 func (l Layer) adiabaticDrop(t units.Temperature) units.TemperatureDifference {
 	return units.TemperatureDifference(float64(t) * math.Expm1(l.dissipationNumber()))
 }

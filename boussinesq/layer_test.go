@@ -49,8 +49,9 @@ func TestLayerCheckNamesTheField(t *testing.T) {
 
 		// Whatever derives a number from a layer checks it.
 		for name, f := range numbers() {
-			_, err := f(l)
+			x, err := f(l)
 			assert.Error(t, err, "%s of a bad %s", name, tt.field)
+			assert.Zero(t, x, name)
 		}
 		_, err := l.Scales()
 		wantField(t, err, tt.field)

@@ -85,7 +85,7 @@ func TestPresetsAgreeWithTheirSources(t *testing.T) {
 		require.NoError(t, err)
 		f, ok := properties(p)[row[1]]
 		require.True(t, ok, what)
-		inRelative(t, number(t, row[2]), f.value, math.Pow(10, -float64(max(f.digits, 3))), what)
+		inRelative(t, number(t, row[2]), f.value, 1e-12, what)
 		assert.Equal(t, number(t, row[3]), f.low, what)
 		assert.Equal(t, number(t, row[4]), f.high, what)
 		assert.Equal(t, row[5], strconv.Itoa(f.digits), what)

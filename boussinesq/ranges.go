@@ -3,6 +3,8 @@ package boussinesq
 import (
 	"fmt"
 	"math"
+	"slices"
+	"strings"
 
 	"example.org/overturn/units"
 	"gonum.org/v1/gonum/stat/distuv"
@@ -21,19 +23,39 @@ const (
 	LogNormal               // the 16 and 84 % points of a log-normal distribution
 )
 
+var shapes = []string{Uniform: "uniform", LogUniform: "log-uniform", Normal: "normal", LogNormal: "log-normal"}
+
+// known reports whether s is one of the constants.
+func (s Shape) known() bool { return s >= 0 && int(s) < len(shapes) }
+
 // String returns the name of the shape.
 func (s Shape) String() string {
-	switch s {
-	case Uniform:
-		return "uniform"
-	case LogUniform:
-		return "log-uniform"
-	case Normal:
-		return "normal"
-	case LogNormal:
-		return "log-normal"
+	if !s.known() {
+		return fmt.Sprintf("Shape(%d)", int(s))
 	}
-	return fmt.Sprintf("Shape(%d)", int(s))
+	return shapes[s]
+}
+
+// MarshalText returns the name of the shape.
+func (s Shape) MarshalText() ([]byte, error) {
+	if !s.known() {
+		return nil, s.unknown(s.String())
+	}
+	return []byte(shapes[s]), nil
+}
+
+// UnmarshalText sets the shape by its name.
+func (s *Shape) UnmarshalText(text []byte) error {
+	i := slices.Index(shapes, string(text))
+	if i < 0 {
+		return s.unknown(fmt.Sprintf("%q", text))
+	}
+	*s = Shape(i)
+	return nil
+}
+
+func (Shape) unknown(value string) error {
+	return &FieldError{Field: "Shape", Value: value, Want: "one of " + strings.Join(shapes, ", ")}
 }
 
 // logarithmic reports whether the shape lives on a scale of ratios.
@@ -82,8 +104,8 @@ func (r Range[Q]) check(field string) error {
 	if err := first(finite(field+".Low", r.Low), finite(field+".High", r.High)); err != nil {
 		return err
 	}
-	if r.Shape < Uniform || r.Shape > LogNormal {
-		return &FieldError{Field: field + ".Shape", Value: r.Shape.String(), Want: "one of the constants"}
+	if !r.Shape.known() {
+		return &FieldError{Field: field + ".Shape", Value: r.Shape.String(), Want: "one of " + strings.Join(shapes, ", ")}
 	}
 	if r.Low > r.High {
 		return &FieldError{Field: field + ".High", Value: fmt.Sprint(r.High), Want: "at least a Low of " + fmt.Sprint(r.Low)}

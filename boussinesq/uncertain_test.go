@@ -71,6 +71,20 @@ func TestShapesInWords(t *testing.T) {
 	assert.Equal(t, "normal", Normal.String())
 	assert.Equal(t, "log-normal", LogNormal.String())
 	assert.Equal(t, "Shape(7)", Shape(7).String())
+	for _, want := range []Shape{Uniform, LogUniform, Normal, LogNormal} {
+		text, err := want.MarshalText()
+		require.NoError(t, err)
+		got := Shape(99)
+		require.NoError(t, got.UnmarshalText(text))
+		assert.Equal(t, want, got)
+	}
+	for _, bad := range []Shape{-1, 4} {
+		_, err := bad.MarshalText()
+		wantField(t, err, "Shape")
+	}
+	s := Normal
+	wantField(t, s.UnmarshalText([]byte("Normal")), "Shape")
+	assert.Equal(t, Normal, s)
 }
 
 // Each range reaches its own field, and no other.
@@ -149,6 +163,7 @@ func TestErrorsComeThrough(t *testing.T) {
 	u.Layer.Depth = 0
 	_, err = u.Bounds(Layer.Rayleigh)
 	wantField(t, err, "Layer.Depth")
+	assert.NotContains(t, err.Error(), "end of the ranges", "it is the best values that are bad")
 	for _, bad := range []float64{math.NaN(), math.Inf(1)} {
 		_, err = u.Sample(func(Layer) (float64, error) { return bad, nil }, nil)
 		wantField(t, err, "number of draw 0")

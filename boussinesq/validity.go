@@ -137,11 +137,12 @@ func (v validity) dissipation() Criterion {
 }
 
 func (v validity) adiabat() Criterion {
-	x := float64(v.adiabaticDrop(v.Top)) / v.theta
+	mean := v.Top.Add(units.TemperatureDifference(v.theta / 2))
+	x := float64(v.adiabaticDrop(mean)) / v.theta
 	return Criterion{
-		Name: "adiabatic temperature change", Formula: "T_top (exp(Di) − 1)/ΔT", Value: x, Bound: TenPercent,
-		Sentence: fmt.Sprintf("Compression alone warms what sinks from the top by %s of the driving temperature difference; "+
-			"add the adiabat to modelled temperatures and drive with the rest.", percent(x)),
+		Name: "adiabatic temperature change", Formula: "T_mean (exp(Di) − 1)/ΔT", Value: x, Bound: TenPercent,
+		Sentence: fmt.Sprintf("Compression alone warms what sinks through the layer by %s of the temperature difference, "+
+			"and that part drives nothing.", percent(x)),
 		Source: "Jeffreys (1930); bound: Gray & Giorgini (1976), from memory",
 	}
 }
@@ -218,7 +219,7 @@ func (c Criterion) notJudged(why string) Criterion {
 }
 
 // percent prints a share.
-func percent(x float64) string { return fmt.Sprintf("%.2g %%", 100*x) }
+func percent(x float64) string { return fmt.Sprintf("%.3g %%", 100*x) }
 
 // factor prints exp(x), as a percentage where it is close to 1.
 func factor(x float64) string {
