@@ -8,8 +8,8 @@ import (
 	"example.org/overturn/units"
 )
 
-// A centimetre of water convects once its bottom is a tenth of a kelvin warmer
-// than its top: the critical Rayleigh number between rigid plates is 1708.
+// A centimetre of water with a tenth of a kelvin across it is just short of
+// convection: between rigid plates the critical number is 1708.
 func ExampleLayer_Rayleigh() {
 	water, err := boussinesq.ByName("water-20C")
 	if err != nil {
@@ -34,8 +34,7 @@ func ExampleLayer_Rayleigh() {
 	// Output: Ra = 1412, Pr = 7.0
 }
 
-// A mantle from the core to the surface: ten million, as textbooks say, and far
-// above critical.
+// A mantle from the core to the surface: about ten million, far above critical.
 func ExampleLayer_Rayleigh_mantle() {
 	rock, err := boussinesq.ByName("upper-mantle-rounded")
 	if err != nil {

@@ -74,35 +74,44 @@ type Settings struct {
 	Seed uint64
 }
 
+// resolve fills in the defaults. The receiver may be nil.
+func (s *Settings) resolve() (draws int, seed uint64, err error) {
+	if s == nil {
+		return DefaultDraws, 0, nil
+	}
+	switch {
+	case s.Draws == 0:
+		return DefaultDraws, s.Seed, nil
+	case s.Draws < 2:
+		return 0, 0, &FieldError{Field: "Settings.Draws", Value: fmt.Sprint(s.Draws), Want: ">= 2, or 0 for the default"}
+	}
+	return s.Draws, s.Seed, nil
+}
+
 // Sample evaluates f on layers drawn from the ranges, all independent, by
 // Latin hypercube sampling (McKay, Beckman & Conover 1979): each range is cut
-// into as many slices of equal probability as there are draws, and each slice
-// is used once, at its middle, in random order. A mean then converges faster
+// into as many strata of equal probability as there are draws, and each one is
+// used once, at its middle, in random order. A mean then converges faster
 // than with independent draws.
 //
-// The first error of f ends the sample. To count layers that have no number,
+// The first error of f ends the sample, so an f that takes long can watch a
+// context of its own. To count layers that have no number,
 // such as those that are stable, as zero, let f say so.
 func (u Uncertain) Sample(f Number, settings *Settings) (*Sample, error) {
-	var s Settings
-	if settings != nil {
-		s = *settings
-	}
-	if s.Draws == 0 {
-		s.Draws = DefaultDraws
-	}
-	if s.Draws < 2 {
-		return nil, &FieldError{Field: "Settings.Draws", Value: fmt.Sprint(s.Draws), Want: ">= 2, or 0 for the default"}
+	draws, seed, err := settings.resolve()
+	if err != nil {
+		return nil, err
 	}
 	params, err := u.Ranges.parameters()
 	if err != nil {
 		return nil, err
 	}
-	slices := hypercube(len(params), s.Draws, s.Seed)
-	values := make([]float64, s.Draws)
+	strata := hypercube(len(params), draws, seed)
+	values := make([]float64, draws)
 	for i := range values {
 		l := u.Layer
 		for j, p := range params {
-			share := (float64(slices[j][i]) + 0.5) / float64(s.Draws)
+			share := (float64(strata[j][i]) + 0.5) / float64(draws)
 			p.set(&l, quantile(p.shape, p.low, p.high, share))
 		}
 		if values[i], err = f(l); err != nil {
@@ -112,17 +121,17 @@ func (u Uncertain) Sample(f Number, settings *Settings) (*Sample, error) {
 			return nil, &FieldError{Field: fmt.Sprintf("number of draw %d", i), Value: fmt.Sprint(values[i]), Want: "a finite number"}
 		}
 	}
-	return newSample(values, params, slices), nil
+	return newSample(values, params, strata), nil
 }
 
 // hypercube returns a permutation of 0 to draws-1 for each parameter.
 func hypercube(parameters, draws int, seed uint64) [][]int {
 	random := rand.New(rand.NewPCG(seed, 0))
-	slices := make([][]int, parameters)
-	for j := range slices {
-		slices[j] = random.Perm(draws)
+	strata := make([][]int, parameters)
+	for j := range strata {
+		strata[j] = random.Perm(draws)
 	}
-	return slices
+	return strata
 }
 
 // Sample holds the values that a number takes over the ranges of a layer.
@@ -146,13 +155,13 @@ type Influence struct {
 	Rises bool
 }
 
-func newSample(values []float64, params []parameter, slices [][]int) *Sample {
+func newSample(values []float64, params []parameter, strata [][]int) *Sample {
 	rank := ranks(values)
 	s := &Sample{Values: append([]float64(nil), values...)}
 	sort.Float64s(s.Values)
 	x := make([]float64, len(values))
 	for j, p := range params {
-		for i, k := range slices[j] {
+		for i, k := range strata[j] {
 			x[i] = float64(k)
 		}
 		if r := stat.Correlation(x, rank, nil); !math.IsNaN(r) { // NaN: the number is constant

@@ -230,8 +230,8 @@ func TestSampleOfAProductIsLogNormal(t *testing.T) {
 	}
 }
 
-// One uniform parameter, cut into slices: the sample is exact.
-func TestSlicesAreUsedOnce(t *testing.T) {
+// One uniform parameter, cut into strata: the sample is exact.
+func TestStrataAreUsedOnce(t *testing.T) {
 	u := Uncertain{round(), Ranges{Depth: Between[units.Length](1, 9)}}
 	s, err := u.Sample(func(l Layer) (float64, error) { return float64(l.Depth), nil }, &Settings{Draws: 4})
 	require.NoError(t, err)
@@ -258,12 +258,14 @@ func TestSampleIsReproducible(t *testing.T) {
 	}
 	assert.Equal(t, draw(nil), draw(&Settings{Draws: DefaultDraws}))
 	assert.Len(t, draw(nil), 1000)
+	assert.Equal(t, draw(&Settings{Seed: 1}), draw(&Settings{Seed: 1}))
 	assert.NotEqual(t, draw(nil), draw(&Settings{Seed: 1}))
+	assert.Len(t, draw(&Settings{Draws: 2}), 2)
 	assert.IsNonDecreasing(t, draw(&Settings{Seed: 5}))
 }
 
 // Parameters are independent: their correlation is that of chance.
-func TestSlicesAreIndependent(t *testing.T) {
+func TestStrataAreIndependent(t *testing.T) {
 	const draws = 4000
 	columns := hypercube(3, draws, 11)
 	floats := make([][]float64, len(columns))
