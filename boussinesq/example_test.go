@@ -1,6 +1,7 @@
 package boussinesq_test
 
 import (
+	"encoding/json"
 	"fmt"
 	"log"
 
@@ -106,6 +107,7 @@ func ExampleLayer_Validity() {
 	}
 	// Output:
 	// dissipation number: α g d/c_p = 0.16, strained (bound 0.1). Viscous heating, which is left out, comes to about 16 % of the convected heat.
+	// adiabatic temperature change: T_mean (exp(Di) − 1)/ΔT = 0.12, strained (bound 0.1). Compression alone warms what sinks through the layer by 12 % of the temperature difference, and that part drives nothing.
 	// compression: ρ g d/K = 0.16, strained (bound 0.1). The weight of the layer compresses its base by 16 %; the depth is that part of a density scale height.
 }
 
@@ -118,14 +120,14 @@ func ExampleUncertain() {
 	}
 	ranges := oil.Ranges()
 	ranges.Depth = boussinesq.PlusMinus(20*units.Millimetre, 0.5*units.Millimetre)
-	ranges.Bottom = boussinesq.Between(units.Celsius(29.9), units.Celsius(30.1))
+	ranges.Bottom = boussinesq.Between(units.Celsius(27.6), units.Celsius(27.8))
 	tank := boussinesq.Uncertain{
 		Layer: boussinesq.Layer{
 			Material: oil.Material(),
 			Depth:    20 * units.Millimetre,
 			Gravity:  units.StandardGravity,
 			Top:      units.Celsius(25),
-			Bottom:   units.Celsius(30),
+			Bottom:   units.Celsius(27.7),
 		},
 		Ranges: ranges,
 	}
@@ -138,11 +140,11 @@ func ExampleUncertain() {
 		log.Fatal(err)
 	}
 	fmt.Printf("Ra = %.0f, at least %.0f, at most %.0f\n", bounds.Best, bounds.Low, bounds.High)
-	fmt.Printf("above 1708 with probability %.2f\n", sample.Above(1708))
+	fmt.Printf("above 1708 with probability %.1f\n", sample.Above(1708))
 	fmt.Println("what matters most:", sample.Influences()[0].Parameter)
 	// Output:
-	// Ra = 3264, at least 2710, at most 3843
-	// above 1708 with probability 1.00
+	// Ra = 1762, at least 1413, at most 2156
+	// above 1708 with probability 0.6
 	// what matters most: Depth
 }
 
@@ -163,4 +165,29 @@ func ExampleByName() {
 	// 2.18 W/(m K) to 2.5 W/(m K) - from memory
 	// boussinesq: Material.Viscosity is 0 Pa s, want > 0 and finite
 	// <nil>
+}
+
+// A layer and its ranges fit into a configuration file: each quantity is text
+// with a unit.
+func ExampleUncertain_config() {
+	const config = `{
+		"Layer": {
+			"Material": {
+				"Density": "917 kg/m^3", "Expansivity": "1.6e-4 1/K", "Conductivity": "2.2 W/(m K)",
+				"SpecificHeat": "2000 J/(kg K)", "Viscosity": "1e14 Pa s"
+			},
+			"Depth": "24 km", "Gravity": "1.3 m/s^2", "Top": "100 K", "Bottom": "-3 degC"
+		},
+		"Ranges": {"Viscosity": {"Low": "1e13 Pa s", "High": "1e15 Pa s", "Shape": "log-uniform"}}
+	}`
+	var shell boussinesq.Uncertain
+	if err := json.Unmarshal([]byte(config), &shell); err != nil {
+		log.Fatal(err)
+	}
+	ra, err := shell.Bounds(boussinesq.Layer.Rayleigh)
+	if err != nil {
+		log.Fatal(err)
+	}
+	fmt.Printf("Ra from %.1e to %.1e\n", ra.Low, ra.High)
+	// Output: Ra from 3.7e+05 to 3.7e+07
 }

@@ -218,8 +218,13 @@ func (c Criterion) notJudged(why string) Criterion {
 	return c
 }
 
-// percent prints a share.
-func percent(x float64) string { return fmt.Sprintf("%.3g %%", 100*x) }
+// percent prints a share to two digits.
+func percent(x float64) string {
+	if x > 0.995 {
+		return fmt.Sprintf("%.0f %%", 100*x)
+	}
+	return fmt.Sprintf("%.2g %%", 100*x)
+}
 
 // factor prints exp(x), as a percentage where it is close to 1.
 func factor(x float64) string {
