@@ -137,3 +137,6 @@ func (w *Walls) conductsAs(other *Walls) bool {
 	}
 	return true
 }
+
+// IsPeriodic reports whether the wall is [Periodic].
+func (w Wall) IsPeriodic() bool { return w.kind == periodic }
