@@ -77,10 +77,13 @@ func (ld *load) set(sv *Solver, force *staggered.Vector, source *staggered.Scala
 
 // balanceSource checks that the source equals the net outflow.
 func (ld *load) balanceSource(sv *Solver) error {
+	net, size := sv.motion.outflow(sv.grid)
 	if ld.source == nil {
+		if math.Abs(net) > fluxTolerance*size {
+			return fmt.Errorf("stokes: normal velocities of the walls let out %.6g more than they let in (of %.6g in all), want no net flux", net, size)
+		}
 		return nil
 	}
-	net, size := sv.motion.outflow(sv.grid)
 	nx, nz := sv.grid.Cells()
 	sum, dx, dz := 0.0, sv.grid.DX(), sv.grid.DZ()
 	for k := range nz {

@@ -7,13 +7,19 @@ import "example.org/overturn/stokes/internal/team"
 type Hierarchy struct {
 	Levels []*Level
 	team   *team.Team
-	blocks []int // members that work on each level
+	blocks []int  // members that work on each level
+	branch []bool // levels that an F-cycle visits twice
 	bottom *dense
 	s      []*scratch
 }
 
 // leastCells is the size from which a level is shared among goroutines.
 const leastCells = 2048
+
+// branchShrink is by how much the number of cells has to fall from one level
+// where an F-cycle turns back to the next. Where levels shrink slowly, on graded
+// grids, turning back on each of them would cost more than it brings.
+const branchShrink = 0.6
 
 // NewHierarchy coarsens the grid of x and z down to a few cells.
 func NewHierarchy(x, z Axis, t *team.Team) *Hierarchy {
@@ -48,6 +54,14 @@ func NewHierarchy(x, z Axis, t *team.Team) *Hierarchy {
 		}
 		h.blocks = append(h.blocks, blocks)
 		l.makePasses(t, blocks, c, h.s)
+	}
+	last := h.Finest().cells()
+	for k, l := range h.Levels {
+		turn := k < len(h.Levels)-1 && float64(l.cells()) <= branchShrink*float64(last)
+		if turn {
+			last = l.cells()
+		}
+		h.branch = append(h.branch, turn)
 	}
 	h.bottom = newDense(l)
 	return h
@@ -98,7 +112,7 @@ func (h *Hierarchy) cycle(k int) {
 	h.smooth(k)
 	h.run(k, l.passes.restrict)
 	h.cycle(k + 1)
-	if h.revisit(k + 1) {
+	if h.branch[k+1] {
 		h.vCycle(k + 1)
 	}
 	h.run(k, l.passes.prolong)
@@ -118,13 +132,6 @@ func (h *Hierarchy) vCycle(k int) {
 	h.vCycle(k + 1)
 	h.run(k, l.passes.prolong)
 	h.smooth(k)
-}
-
-// revisit reports whether the F-cycle comes back to level k: the last level
-// is solved exactly, and on levels hardly smaller than the one before a second
-// visit costs more than it brings.
-func (h *Hierarchy) revisit(k int) bool {
-	return k < len(h.Levels)-1
 }
 
 func (h *Hierarchy) smooth(k int) {

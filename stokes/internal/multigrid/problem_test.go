@@ -32,9 +32,9 @@ func nodes(h []float64) []float64 {
 }
 
 type box struct {
-	hx, hz         []float64
+	hx, hz          []float64
 	sides, bot, top End
-	workers        int
+	workers         int
 }
 
 func square(n int) box { return box{hx: equal(n, 1), hz: equal(n, 1)} }
@@ -43,7 +43,9 @@ func newProblem(b box, eta func(x, z float64) float64) *problem {
 	x, z := NewAxis(b.hx, b.sides, b.sides), NewAxis(b.hz, b.bot, b.top)
 	p := &problem{sv: NewSolver(x, z, team.New(max(1, b.workers))), x: nodes(b.hx), z: nodes(b.hz)}
 	p.fx = func(x, z float64) float64 { return 0 }
-	p.fz = func(x, z float64) float64 { return math.Cos(math.Pi*x/p.x[x_last(p.x)]) * math.Sin(math.Pi*z/p.z[x_last(p.z)]) }
+	p.fz = func(x, z float64) float64 {
+		return math.Cos(math.Pi*x/p.x[x_last(p.x)]) * math.Sin(math.Pi*z/p.z[x_last(p.z)])
+	}
 	l := p.sv.Finest()
 	for j := 1; j <= z.N; j++ {
 		for i := 1; i <= x.N; i++ {
