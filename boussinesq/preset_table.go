@@ -155,8 +155,8 @@ var presets = []Preset{
 	},
 	{
 		Name: "basalt-melt", Title: "basaltic melt near its liquidus", Conditions: "about 1200 °C, 1 atm, poor in volatiles",
-		Note: "each value is good to 20 % at best. Viscosity is 10 to 100 Pa s in melts of hot-spot volcanoes and " +
-			"100 to 1000 Pa s in arc basalts with crystals; the range is the first",
+		Note: "each value is good to 20 % at best. Viscosity is 10 to 100 Pa s at Kilauea and 100 to 1000 Pa s at " +
+			"Stromboli; the range is the first",
 		Temperature:  1473.15,
 		Density:      memory(kgm3(2700), 1, basalt),
 		Expansivity:  memory(perK(6e-5), 1, basalt).between(perK(5e-5), perK(7e-5)),

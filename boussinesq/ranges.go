@@ -79,10 +79,16 @@ func Decades[Q units.Quantity](low, high Q) Range[Q] {
 	return Range[Q]{Low: low, High: high, Shape: LogUniform}
 }
 
-// PlusMinus returns a normal distribution of the given standard deviation. The
-// two arguments of a temperature differ in type, so write its Range out.
+// PlusMinus returns a normal distribution of the given standard deviation. For
+// an absolute temperature there is [PlusMinusTemperature].
 func PlusMinus[Q units.Quantity](mean, deviation Q) Range[Q] {
 	return Range[Q]{Low: mean - deviation, High: mean + deviation, Shape: Normal}
+}
+
+// PlusMinusTemperature is [PlusMinus] for an absolute temperature, whose
+// deviation is a difference.
+func PlusMinusTemperature(mean units.Temperature, deviation units.TemperatureDifference) Range[units.Temperature] {
+	return Range[units.Temperature]{Low: mean.Add(-deviation), High: mean.Add(deviation), Shape: Normal}
 }
 
 // IsZero reports whether the range leaves its parameter certain.

@@ -156,7 +156,8 @@ func (s Scales) HeatFlux(x float64) units.HeatFlux { return units.HeatFlux(x) * 
 // FromHeatFlux is the inverse of [Scales.HeatFlux].
 func (s Scales) FromHeatFlux(q units.HeatFlux) float64 { return float64(q / s.heatFlux) }
 
-// VolumetricHeating returns x kθ/d², the heat made per volume and time.
+// VolumetricHeating returns x kθ/d², the heat made per volume and time. Its
+// inverse makes the source of a dimensionless model of [Layer.Heating].
 func (s Scales) VolumetricHeating(x float64) units.VolumetricHeating {
 	return units.VolumetricHeating(x) * s.heating
 }

@@ -108,8 +108,9 @@ func (u Uncertain) Sample(f Number, settings *Settings) (*Sample, error) {
 	}
 	strata := hypercube(len(params), draws, seed)
 	values := make([]float64, draws)
+	var l Layer
 	for i := range values {
-		l := u.Layer
+		l = u.Layer
 		for j, p := range params {
 			share := (float64(strata[j][i]) + 0.5) / float64(draws)
 			p.set(&l, quantile(p.shape, p.low, p.high, share))

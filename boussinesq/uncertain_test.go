@@ -36,6 +36,15 @@ func TestQuantilesOfTheShapes(t *testing.T) {
 	}
 }
 
+func TestPlusMinusTemperature(t *testing.T) {
+	assert.Equal(t, PlusMinus[units.Temperature](300, 5), PlusMinusTemperature(300, 5))
+}
+
+func TestRangeIsZero(t *testing.T) {
+	assert.True(t, Range[units.Length]{}.IsZero())
+	assert.False(t, Between[units.Length](0, 1).IsZero())
+}
+
 func TestBadRanges(t *testing.T) {
 	nan := units.Length(math.NaN())
 	for _, tt := range []struct {
@@ -286,6 +295,16 @@ func TestConstantNumberHasNoInfluences(t *testing.T) {
 	s, err := u.Sample(Layer.Prandtl, nil)
 	require.NoError(t, err)
 	assert.Empty(t, s.Influences())
+}
+
+// The sample itself allocates, each draw does not.
+func TestDrawsDoNotAllocate(t *testing.T) {
+	u := Uncertain{round(), Ranges{Depth: Between[units.Length](1, 3)}}
+	count := func(draws int) float64 {
+		s := &Settings{Draws: draws}
+		return testing.AllocsPerRun(5, func() { _, _ = u.Sample(Layer.Rayleigh, s) })
+	}
+	assert.Equal(t, count(100), count(400))
 }
 
 func TestRanksShareTies(t *testing.T) {

@@ -25,9 +25,8 @@
 // carry their units. [FromLayer] and [FromLayerSI] make either from a
 // [boussinesq.Layer].
 //
-// x runs to the right, z up, and gravity points along −z. The pressure of
-// [Model.Flow] is the dynamic pressure less the part that balances the
-// horizontal mean of the buoyancy, with zero mean.
+// x runs to the right, z up, and gravity points along −z. Pressures are dynamic,
+// what is left without the weight of fluid at temperature zero, with zero mean.
 //
 // # Method
 //

@@ -6,15 +6,14 @@ import (
 	"math"
 
 	"example.org/overturn/heat"
-	"example.org/overturn/stokes/staggered"
 )
 
 // Diagnostics are the numbers that describe one state of a layer. They are in
 // the units of the problem; the Nusselt numbers have none.
 type Diagnostics struct {
-	// NuTop and NuBottom are the mean heat flux upward through the wall over
-	// that conducted across the box by the difference between the mean
-	// temperatures of bottom and top.
+	// NuTop and NuBottom are the mean heat flux conducted upward through the
+	// wall over that of a layer at rest between the mean temperatures of bottom
+	// and top. Infinite or NaN where these two are equal.
 	NuTop, NuBottom float64
 
 	// RMSVelocity is the root mean square speed over the box, SurfaceVelocity
@@ -24,10 +23,9 @@ type Diagnostics struct {
 	// MeanTemperature is the mean over the box.
 	MeanTemperature float64
 
-	// CornerGradients are −∂T/∂z scaled by the height over the temperature
-	// difference, at the corners upper left, upper right, lower right, lower
-	// left: q1 to q4 of Blankenbach et al. (1989) for a cell with its upwelling
-	// at the left.
+	// CornerGradients are −∂T/∂z, not scaled further, at the corners upper
+	// left, upper right, lower right, lower left: q1 to q4 of Blankenbach et al.
+	// (1989) for a cell with its upwelling at the left.
 	CornerGradients [4]float64
 
 	// Dissipation is the viscous dissipation in the box and BuoyancyWork the
@@ -68,10 +66,10 @@ type Stop int
 
 // Reasons to stop.
 const (
-	Running  Stop = iota // it did not
-	EndTime              // Settings.EndTime was reached
-	MaxSteps             // Settings.MaxSteps were taken
-	Steady               // Sample.Change fell to Settings.SteadyTolerance
+	Running       Stop = iota // it did not
+	AtEndTime                 // Settings.EndTime was reached
+	AtMaxSteps                // Settings.MaxSteps were taken
+	AtSteadyState             // Sample.Change fell to Settings.SteadyTolerance
 )
 
 // String returns the reason in words.
@@ -79,11 +77,11 @@ func (s Stop) String() string {
 	switch s {
 	case Running:
 		return "running"
-	case EndTime:
+	case AtEndTime:
 		return "end time reached"
-	case MaxSteps:
+	case AtMaxSteps:
 		return "steps used up"
-	case Steady:
+	case AtSteadyState:
 		return "steady"
 	}
 	return fmt.Sprintf("Stop(%d)", int(s))
@@ -132,18 +130,6 @@ func (m *Model) sample(reason Stop) (Sample, error) {
 		StokesIterations: m.iterations,
 		Stop:             reason,
 	}, err
-}
-
-// A sampler computes diagnostics in memory of its own.
-type sampler struct {
-	sys     *system
-	scratch *staggered.Scalar
-	wall    []float64
-}
-
-func newSampler(sys *system) *sampler {
-	n := max(sys.Grid.NX(), sys.Grid.NZ()) + 1
-	return &sampler{sys: sys, scratch: staggered.NewScalar(sys.Grid), wall: make([]float64, n)}
 }
 
 // budgetError compares the change of the heat content with the report of the

@@ -63,11 +63,11 @@ func (m *Model) Run(ctx context.Context) (Sample, error) {
 func (m *Model) stop(taken int) Stop {
 	switch {
 	case m.time >= m.settings.EndTime:
-		return EndTime
+		return AtEndTime
 	case m.change <= m.settings.SteadyTolerance && m.settings.SteadyTolerance > 0:
-		return Steady
+		return AtSteadyState
 	case m.settings.MaxSteps > 0 && taken >= m.settings.MaxSteps:
-		return MaxSteps
+		return AtMaxSteps
 	}
 	return Running
 }
@@ -117,12 +117,19 @@ func (m *Model) try(ctx context.Context, dt float64) (iterations int, err error)
 	} else if err := m.predictMiddle(ctx, dt); err != nil {
 		return 0, err
 	}
-	content := m.sys.heat.HeatContent(m.temperature)
+	before, err := m.sys.heat.HeatContent(m.temperature)
+	if err != nil {
+		return 0, fmt.Errorf("convection: %w", err)
+	}
 	rep, err := m.sys.heat.Step(ctx, m.temperature, m.middle, dt)
 	if err != nil {
 		return 0, fmt.Errorf("convection: %w", err)
 	}
-	m.budget = budgetError(content, m.sys.heat.HeatContent(m.temperature), &rep)
+	after, err := m.sys.heat.HeatContent(m.temperature)
+	if err != nil {
+		return 0, fmt.Errorf("convection: %w", err)
+	}
+	m.budget = budgetError(before, after, &rep)
 	if m.hasPrevious {
 		extrapolate(m.middle, m.flow, m.previous, dt/m.last)
 	}

@@ -58,7 +58,7 @@ func (sys *system) solveFlow(ctx context.Context, t *staggered.Scalar, flow *sta
 	if sys.viscosity != nil {
 		sys.viscosityTo(sys.viscosity, t)
 	}
-	sys.buoyancyTo(sys.buoyancy, t)
+	sys.buoyancy.FillVertical(t, sys.Rayleigh)
 	rep, err := sys.stokes.Solve(ctx, flow, sys.viscosity, sys.buoyancy)
 	if err != nil {
 		return rep, fmt.Errorf("convection: %w", err)
@@ -75,23 +75,19 @@ func (sys *system) viscosityTo(dst, t *staggered.Scalar) {
 	}
 }
 
-// buoyancyTo stores the buoyancy on the faces less its mean over each height.
-// The mean drives no flow, pressure balances it to the last bit; but beside it
-// the relative tolerance of the Stokes solve would be blind to a disturbance a
-// million times smaller.
-func (sys *system) buoyancyTo(dst *staggered.Vector, t *staggered.Scalar) {
-	dst.FillVertical(t, sys.Rayleigh)
+// work returns the work that the buoyancy of t does on a flow, per time.
+func (sys *system) work(t *staggered.Scalar, flow *staggered.Flow) float64 {
+	sys.buoyancy.FillVertical(t, sys.Rayleigh)
 	nx, nz := sys.Grid.Cells()
-	dx, width := sys.Grid.DX(), sys.Grid.Width()
-	for k := 0; k <= nz; k++ {
-		row := dst.Z[k*nx:][:nx]
-		mean := 0.0
-		for i, b := range row {
-			mean += b * dx[i]
+	dx, dz := sys.Grid.DX(), sys.Grid.DZ()
+	total := 0.0
+	for k := 1; k < nz; k++ {
+		force, v := sys.buoyancy.Z[k*nx:][:nx], flow.VZ[k*nx:][:nx]
+		sum := 0.0
+		for i, w := range v {
+			sum += force[i] * w * dx[i]
 		}
-		mean /= width
-		for i := range row {
-			row[i] -= mean
-		}
+		total += sum * 0.5 * (dz[k-1] + dz[k])
 	}
+	return total
 }
