@@ -25,6 +25,9 @@ func (q Dimensionless) AppendText(b []byte) ([]byte, error) { return appendText(
 // MarshalText is AppendText to nothing.
 func (q Dimensionless) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Dimensionless) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Dimensionless) Dimension() Dimension { return Dimension{} }
 

@@ -27,6 +27,9 @@ func (q Energy) AppendText(b []byte) ([]byte, error) { return appendText(b, q) }
 // MarshalText is AppendText to nothing.
 func (q Energy) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Energy) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Energy) Dimension() Dimension { return Dimension{Mass: 1, Length: 2, Time: -2} }
 
@@ -58,6 +61,9 @@ func (q Power) AppendText(b []byte) ([]byte, error) { return appendText(b, q) }
 // MarshalText is AppendText to nothing.
 func (q Power) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Power) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Power) Dimension() Dimension { return Dimension{Mass: 1, Length: 2, Time: -3} }
 
@@ -85,6 +91,9 @@ func (q SpecificEnergy) AppendText(b []byte) ([]byte, error) { return appendText
 
 // MarshalText is AppendText to nothing.
 func (q SpecificEnergy) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *SpecificEnergy) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (SpecificEnergy) Dimension() Dimension { return Dimension{Length: 2, Time: -2} }
@@ -115,6 +124,9 @@ func (q MolarEnergy) AppendText(b []byte) ([]byte, error) { return appendText(b,
 // MarshalText is AppendText to nothing.
 func (q MolarEnergy) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *MolarEnergy) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (MolarEnergy) Dimension() Dimension { return Dimension{Mass: 1, Length: 2, Time: -2, Amount: -1} }
 
@@ -142,6 +154,9 @@ func (q MolarVolume) AppendText(b []byte) ([]byte, error) { return appendText(b,
 
 // MarshalText is AppendText to nothing.
 func (q MolarVolume) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *MolarVolume) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (MolarVolume) Dimension() Dimension { return Dimension{Length: 3, Amount: -1} }

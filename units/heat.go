@@ -24,6 +24,9 @@ func (q TemperatureGradient) AppendText(b []byte) ([]byte, error) { return appen
 // MarshalText is AppendText to nothing.
 func (q TemperatureGradient) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *TemperatureGradient) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (TemperatureGradient) Dimension() Dimension { return Dimension{Temperature: 1, Length: -1} }
 
@@ -51,6 +54,9 @@ func (q Expansivity) AppendText(b []byte) ([]byte, error) { return appendText(b,
 // MarshalText is AppendText to nothing.
 func (q Expansivity) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Expansivity) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Expansivity) Dimension() Dimension { return Dimension{Temperature: -1} }
 
@@ -77,6 +83,9 @@ func (q Conductivity) AppendText(b []byte) ([]byte, error) { return appendText(b
 
 // MarshalText is AppendText to nothing.
 func (q Conductivity) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *Conductivity) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (Conductivity) Dimension() Dimension {
@@ -109,6 +118,9 @@ func (q SpecificHeat) AppendText(b []byte) ([]byte, error) { return appendText(b
 // MarshalText is AppendText to nothing.
 func (q SpecificHeat) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *SpecificHeat) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (SpecificHeat) Dimension() Dimension { return Dimension{Length: 2, Time: -2, Temperature: -1} }
 
@@ -137,6 +149,9 @@ func (q HeatFlux) AppendText(b []byte) ([]byte, error) { return appendText(b, q)
 
 // MarshalText is AppendText to nothing.
 func (q HeatFlux) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *HeatFlux) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (HeatFlux) Dimension() Dimension { return Dimension{Mass: 1, Time: -3} }
@@ -167,6 +182,9 @@ func (q VolumetricHeating) AppendText(b []byte) ([]byte, error) { return appendT
 // MarshalText is AppendText to nothing.
 func (q VolumetricHeating) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *VolumetricHeating) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (VolumetricHeating) Dimension() Dimension { return Dimension{Mass: 1, Length: -1, Time: -3} }
 
@@ -196,6 +214,9 @@ func (q SpecificHeating) AppendText(b []byte) ([]byte, error) { return appendTex
 // MarshalText is AppendText to nothing.
 func (q SpecificHeating) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *SpecificHeating) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (SpecificHeating) Dimension() Dimension { return Dimension{Length: 2, Time: -3} }
 
@@ -222,6 +243,9 @@ func (q HeatTransferCoefficient) AppendText(b []byte) ([]byte, error) { return a
 
 // MarshalText is AppendText to nothing.
 func (q HeatTransferCoefficient) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *HeatTransferCoefficient) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (HeatTransferCoefficient) Dimension() Dimension {

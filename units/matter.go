@@ -24,6 +24,9 @@ func (q Mass) AppendText(b []byte) ([]byte, error) { return appendText(b, q) }
 // MarshalText is AppendText to nothing.
 func (q Mass) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Mass) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Mass) Dimension() Dimension { return Dimension{Mass: 1} }
 
@@ -50,6 +53,9 @@ func (q Density) AppendText(b []byte) ([]byte, error) { return appendText(b, q) 
 
 // MarshalText is AppendText to nothing.
 func (q Density) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *Density) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (Density) Dimension() Dimension { return Dimension{Mass: 1, Length: -3} }
@@ -84,6 +90,9 @@ func (q Pressure) AppendText(b []byte) ([]byte, error) { return appendText(b, q)
 // MarshalText is AppendText to nothing.
 func (q Pressure) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Pressure) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Pressure) Dimension() Dimension { return Dimension{Mass: 1, Length: -1, Time: -2} }
 
@@ -112,6 +121,9 @@ func (q ForceDensity) AppendText(b []byte) ([]byte, error) { return appendText(b
 
 // MarshalText is AppendText to nothing.
 func (q ForceDensity) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *ForceDensity) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (ForceDensity) Dimension() Dimension { return Dimension{Mass: 1, Length: -2, Time: -2} }
@@ -142,6 +154,9 @@ func (q DynamicViscosity) AppendText(b []byte) ([]byte, error) { return appendTe
 
 // MarshalText is AppendText to nothing.
 func (q DynamicViscosity) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *DynamicViscosity) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (DynamicViscosity) Dimension() Dimension { return Dimension{Mass: 1, Length: -1, Time: -1} }

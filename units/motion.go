@@ -35,6 +35,9 @@ func (q Time) AppendText(b []byte) ([]byte, error) { return appendText(b, q) }
 // MarshalText is AppendText to nothing.
 func (q Time) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Time) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Time) Dimension() Dimension { return Dimension{Time: 1} }
 
@@ -69,6 +72,9 @@ func (q Velocity) AppendText(b []byte) ([]byte, error) { return appendText(b, q)
 // MarshalText is AppendText to nothing.
 func (q Velocity) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Velocity) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Velocity) Dimension() Dimension { return Dimension{Length: 1, Time: -1} }
 
@@ -97,6 +103,9 @@ func (q Acceleration) AppendText(b []byte) ([]byte, error) { return appendText(b
 
 // MarshalText is AppendText to nothing.
 func (q Acceleration) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *Acceleration) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (Acceleration) Dimension() Dimension { return Dimension{Length: 1, Time: -2} }
@@ -127,6 +136,9 @@ func (q StrainRate) AppendText(b []byte) ([]byte, error) { return appendText(b, 
 // MarshalText is AppendText to nothing.
 func (q StrainRate) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *StrainRate) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (StrainRate) Dimension() Dimension { return Dimension{Time: -1} }
 
@@ -155,6 +167,9 @@ func (q Diffusivity) AppendText(b []byte) ([]byte, error) { return appendText(b,
 // MarshalText is AppendText to nothing.
 func (q Diffusivity) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Diffusivity) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Diffusivity) Dimension() Dimension { return Dimension{Length: 2, Time: -1} }
 
@@ -182,6 +197,9 @@ func (q KinematicViscosity) AppendText(b []byte) ([]byte, error) { return append
 
 // MarshalText is AppendText to nothing.
 func (q KinematicViscosity) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *KinematicViscosity) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (KinematicViscosity) Dimension() Dimension { return Dimension{Length: 2, Time: -1} }

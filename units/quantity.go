@@ -1,7 +1,8 @@
 package units
 
 import (
-	"strconv"
+	"fmt"
+	"math"
 
 	"gonum.org/v1/gonum/unit"
 )
@@ -13,31 +14,25 @@ type Quantity interface {
 	Dimension() Dimension
 }
 
-func text[Q Quantity](q Q) string {
-	s := strconv.FormatFloat(float64(q), 'g', -1, 64)
-	if u := q.Dimension().siUnit(); u != "" {
-		s += " " + u
+// finite refuses NaN and infinities.
+func finite[Q Quantity](q Q) error {
+	if x := float64(q); math.IsNaN(x) || math.IsInf(x, 0) {
+		return fmt.Errorf("units: %w: %T of %v, want a finite number", ErrRange, q, x)
 	}
-	return s
+	return nil
 }
 
-func appendText[Q Quantity](b []byte, q Q) ([]byte, error) { return append(b, text(q)...), nil }
-
-// gonum returns the quantity as a value of gonum's algebra.
+// gonum returns the quantity as a value of gonum's algebra, whose exponents are
+// whole numbers; so are those of all quantities here.
 func gonum[Q Quantity](q Q) *unit.Unit {
 	d := q.Dimension()
-	dims := unit.Dimensions{}
-	for _, e := range []struct {
-		of  unit.Dimension
-		exp float64
-	}{
-		{unit.LengthDim, d.Length}, {unit.MassDim, d.Mass}, {unit.TimeDim, d.Time},
-		{unit.TemperatureDim, d.Temperature}, {unit.MoleDim, d.Amount},
-		{unit.CurrentDim, d.Current}, {unit.LuminousIntensityDim, d.LuminousIntensity},
-	} {
-		if e.exp != 0 {
-			dims[e.of] = int(e.exp)
-		}
-	}
-	return unit.New(float64(q), dims)
+	return unit.New(float64(q), unit.Dimensions{
+		unit.LengthDim:            int(d.Length),
+		unit.MassDim:              int(d.Mass),
+		unit.TimeDim:              int(d.Time),
+		unit.TemperatureDim:       int(d.Temperature),
+		unit.MoleDim:              int(d.Amount),
+		unit.CurrentDim:           int(d.Current),
+		unit.LuminousIntensityDim: int(d.LuminousIntensity),
+	})
 }

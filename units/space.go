@@ -27,6 +27,9 @@ func (q Length) AppendText(b []byte) ([]byte, error) { return appendText(b, q) }
 // MarshalText is AppendText to nothing.
 func (q Length) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Length) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Length) Dimension() Dimension { return Dimension{Length: 1} }
 
@@ -55,6 +58,9 @@ func (q Area) AppendText(b []byte) ([]byte, error) { return appendText(b, q) }
 
 // MarshalText is AppendText to nothing.
 func (q Area) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *Area) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (Area) Dimension() Dimension { return Dimension{Length: 2} }
@@ -85,6 +91,9 @@ func (q Volume) AppendText(b []byte) ([]byte, error) { return appendText(b, q) }
 // MarshalText is AppendText to nothing.
 func (q Volume) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Volume) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Volume) Dimension() Dimension { return Dimension{Length: 3} }
 
@@ -97,7 +106,7 @@ type Permeability float64
 
 // Units of permeability.
 const (
-	Millidarcy Permeability = 1e-3 * Darcy
+	Millidarcy Permeability = 1e-10 / 101325
 	Darcy      Permeability = 1e-7 / 101325 // 1 cP · 1 cm/s · 1 cm / 1 atm
 )
 
@@ -112,6 +121,9 @@ func (q Permeability) AppendText(b []byte) ([]byte, error) { return appendText(b
 
 // MarshalText is AppendText to nothing.
 func (q Permeability) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *Permeability) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (Permeability) Dimension() Dimension { return Dimension{Length: 2} }

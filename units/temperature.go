@@ -38,6 +38,9 @@ func (q Temperature) AppendText(b []byte) ([]byte, error) { return appendText(b,
 // MarshalText is AppendText to nothing.
 func (q Temperature) MarshalText() ([]byte, error) { return appendText(nil, q) }
 
+// UnmarshalText is [Parse].
+func (q *Temperature) UnmarshalText(b []byte) error { return unmarshal(q, b) }
+
 // Dimension implements [Quantity].
 func (Temperature) Dimension() Dimension { return Dimension{Temperature: 1} }
 
@@ -65,6 +68,9 @@ func (q TemperatureDifference) AppendText(b []byte) ([]byte, error) { return app
 
 // MarshalText is AppendText to nothing.
 func (q TemperatureDifference) MarshalText() ([]byte, error) { return appendText(nil, q) }
+
+// UnmarshalText is [Parse].
+func (q *TemperatureDifference) UnmarshalText(b []byte) error { return unmarshal(q, b) }
 
 // Dimension implements [Quantity].
 func (TemperatureDifference) Dimension() Dimension { return Dimension{Temperature: 1} }
