@@ -205,12 +205,18 @@ func TestSteadyIsSecondOrder(t *testing.T) {
 	sizes := []int{16, 32, 64}
 	for _, sides := range []string{"TT", "FT", "TF", "RT", "TR", "RR", "PP", "FR"} {
 		for _, ends := range []string{"TT", "FT", "TF", "RT", "TR"} {
+			if testing.Short() && sides != "TF" && ends != "RT" {
+				continue
+			}
 			for _, graded := range []bool{false, true} {
 				for _, atRest := range []bool{false, true} {
 					name := fmt.Sprintf("%s-%s/graded=%v/rest=%v", sides, ends, graded, atRest)
 					t.Run(name, func(t *testing.T) {
 						m := newManufactured()
 						m.sides, m.ends, m.graded, m.atRest = sides, ends, graded, atRest
+						if ends == "TF" || ends == "TR" { // constant properties have ways of their own
+							m.conductivity, m.capacity = constant(1.3), constant(0.8)
+						}
 						var errs, means, fluxes []float64
 						for _, n := range sizes {
 							st, exact, flow := m.problem(t, n, nil)

@@ -160,7 +160,7 @@ func (op *operator) bound() {
 // per volume that it loses by conduction, and the sum of those of its
 // neighbours in what it gains.
 func (op *operator) conduction(i, k int) (own, others float64) {
-	s, volume := op.stencil(i, k, nil), op.dx[i]*op.dz[k]
+	s, volume := op.stencil(i, k, nil, 0), op.dx[i]*op.dz[k]
 	return s.centre / volume, -(s.south + s.west + s.east + s.north) / volume
 }
 
