@@ -20,7 +20,6 @@ type implicit struct {
 	x    *lines.System
 	z    *lines.System
 
-	parts  []linePart
 	tasksX []func()
 	tasksZ []func()
 	wait   sync.WaitGroup

@@ -23,7 +23,6 @@ type manufactured struct {
 	conductivity   field
 	capacity       field
 	stream         func(x, z float64) float64
-	velocity       func(x, z float64) (u, v float64)
 	sides, ends    string // kinds of the walls: left and right, bottom and top
 	graded, atRest bool
 }
