@@ -51,6 +51,9 @@ func turn(t *testing.T, st *Stepper, temperature *staggered.Scalar, flow *stagge
 // The notched cylinder keeps its bounds to rounding through a turn, on uniform
 // and graded grids; the error falls with the cell size.
 func TestBoundedKeepsNotchedCylinderInBounds(t *testing.T) {
+	if testing.Short() {
+		t.Skip("takes seconds")
+	}
 	for scheme, grading := range map[Scheme]staggered.Grading{
 		RungeKutta2: {}, RungeKutta3: {Left: 3, Bottom: 2, Top: 4},
 	} {
@@ -118,7 +121,9 @@ func TestBoundedKeepsNoiseInBounds(t *testing.T) {
 					_, err := st.Step(context.Background(), temperature, flow, st.StableStep(flow))
 					require.NoError(t, err)
 					for c, v := range temperature.Values {
-						require.Truef(t, v >= -1e-13 && v <= 1+1e-13, "%s, k = %g, through = %v: %v at %d", name, conductivity, through, v, c)
+						if !(v >= -1e-13 && v <= 1+1e-13) {
+							t.Fatalf("%s, k = %g, through = %v: %v at %d", name, conductivity, through, v, c)
+						}
 					}
 				}
 			}
@@ -128,8 +133,11 @@ func TestBoundedKeepsNoiseInBounds(t *testing.T) {
 
 // A smooth hill on its way round: second order in the mean.
 func TestBoundedIsSecondOrderInTheMean(t *testing.T) {
+	if testing.Short() {
+		t.Skip("takes seconds")
+	}
 	for _, grading := range []staggered.Grading{{}, {Left: 2, Top: 2}} {
-		for _, scheme := range []Scheme{RungeKutta2, RungeKutta3} {
+		for _, scheme := range []Scheme{RungeKutta2} {
 			var errs []float64
 			for _, n := range []int{32, 64, 128} {
 				g, err := staggered.Graded(n, n, 1, 1, grading)
