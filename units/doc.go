@@ -75,7 +75,7 @@
 //
 // # Limits
 //
-// Symbols cannot be added. There are no logarithmic units, no uncertainties, no
-// currencies of time but seconds to years, no angles as a dimension. Everything
+// Symbols cannot be added. There are no logarithmic units, no uncertainties, and
+// no dimension of angle: a radian is 1, as in the SI. Everything in the package
 // is safe for concurrent use.
 package units

@@ -82,7 +82,9 @@ func (u *parsedUnit) exact(d decimal) float64 {
 // reading returns the finite x as a number of units, rounded to n significant
 // digits, or with n <= 0 with as many as it takes for value to return x.
 func (u *parsedUnit) reading(x float64, n int) decimal {
-	n = min(n, maxDigits)
+	if y, _ := u.value(decimal{}); y == x && u.zero != 0 {
+		return decimal{} // 0 °C, though 273.15 K is no float64 and the nearest lies next to it
+	}
 	if u.zero == 0 && (x == 0 || u.decimal()) {
 		d := fromScientific(strconv.FormatFloat(x, 'e', max(n, 0)-1, 64))
 		d.exp -= u.tenExponent()

@@ -8,11 +8,13 @@ import (
 // Format writes a quantity in a unit of its dimension, to a number of significant
 // digits, zeros at the end included: Format(v, "cm/yr", 2) is "4.2 cm/yr".
 // With digits <= 0 it writes as few as it takes for [Parse] to return q, to the
-// bit. An empty unit is the SI unit. The unit comes out as it was given.
+// bit, and never more than 1200. An empty unit is the SI unit. The unit comes out
+// as it was given.
 //
 // The error is a [*ParseError] about the unit, or one that wraps [ErrRange] if q
 // is NaN or infinite.
 func Format[Q Quantity](q Q, unit string, digits int) (string, error) {
+	digits = min(digits, maxDigits)
 	unit = trimSpace(unit)
 	if unit == "" {
 		unit = q.Dimension().siUnit()
