@@ -50,7 +50,7 @@ func TestLayerCheckNamesTheField(t *testing.T) {
 		// Whatever derives a number from a layer checks it.
 		for name, f := range numbers() {
 			x, err := f(l)
-			assert.Error(t, err, "%s of a bad %s", name, tt.field)
+			wantField(t, err, tt.field)
 			assert.Zero(t, x, name)
 		}
 		_, err := l.Scales()
@@ -89,8 +89,9 @@ func TestTemperatureDrop(t *testing.T) {
 	require.NoError(t, err)
 	assert.Equal(t, units.TemperatureDifference(-10), drop)
 	l.Bottom = 0
-	_, err = l.TemperatureDrop()
+	drop, err = l.TemperatureDrop()
 	wantField(t, err, "Layer.Bottom")
+	assert.Zero(t, drop)
 	l.Top = 0
 	_, err = l.TemperatureDrop()
 	wantField(t, err, "Layer.Top")

@@ -2,10 +2,12 @@ package convection
 
 import (
 	"context"
+	"errors"
 	"fmt"
 	"iter"
 	"math"
 
+	"example.org/overturn/heat"
 	"example.org/overturn/stokes/staggered"
 )
 
@@ -47,7 +49,7 @@ func (m *Model) Steps(ctx context.Context) iter.Seq2[Sample, error] {
 // last sample. With no criterion set it is an error to call it.
 func (m *Model) Run(ctx context.Context) (Sample, error) {
 	if math.IsInf(m.settings.EndTime, 1) && m.settings.MaxSteps == 0 && m.settings.SteadyTolerance == 0 {
-		return Sample{}, fmt.Errorf("convection: Run never ends, want EndTime, MaxSteps or SteadyTolerance in Settings")
+		return Sample{}, errors.New("convection: Run never ends, want EndTime, MaxSteps or SteadyTolerance in Settings")
 	}
 	var last Sample
 	for s, err := range m.Steps(ctx) {
@@ -93,6 +95,12 @@ func (m *Model) advance(ctx context.Context) error {
 	}
 	copy(m.old.Values, m.temperature.Values)
 	iterations, err := m.try(ctx, dt)
+	for e, ok := errors.AsType[*heat.StepError](err); ok; e, ok = errors.AsType[*heat.StepError](err) {
+		// The flow has become faster than the one that the step was made for.
+		dt = m.settings.Courant * e.Stable
+		copy(m.temperature.Values, m.old.Values)
+		iterations, err = m.try(ctx, dt)
+	}
 	if err != nil {
 		copy(m.temperature.Values, m.old.Values)
 		return err

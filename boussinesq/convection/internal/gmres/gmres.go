@@ -47,7 +47,7 @@ func New(n, maxDirections int) *Solver {
 // whose residual is at most tolerance times the norm of b. It returns the
 // number of products with A.
 func (s *Solver) Solve(ctx context.Context, x, b []float64, a Operator, tolerance float64) (int, error) {
-	floats.Scale(0, x)
+	clear(x)
 	norm := floats.Norm(b, 2)
 	if norm == 0 {
 		return 0, nil
@@ -124,7 +124,8 @@ func (s *Solver) extend(j int, a Operator) (exhausted bool, err error) {
 	return exhausted, nil
 }
 
-// combine solves the triangular system and adds up the directions.
+// combine solves the triangular system and adds up the directions. It clears x
+// first: the products may have used it as scratch.
 func (s *Solver) combine(x []float64, steps int) {
 	y := s.rhs[:steps]
 	for i := steps - 1; i >= 0; i-- {
@@ -133,6 +134,7 @@ func (s *Solver) combine(x []float64, steps int) {
 			y[k] -= s.columns[i][k] * y[i]
 		}
 	}
+	clear(x)
 	for i, c := range y {
 		floats.AddScaled(x, c, s.basis[i])
 	}

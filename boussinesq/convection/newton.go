@@ -1,0 +1,359 @@
+package convection
+
+import (
+	"context"
+	"errors"
+	"fmt"
+	"math"
+
+	"gonum.org/v1/gonum/floats"
+
+	"example.org/overturn/boussinesq/convection/internal/gmres"
+	"example.org/overturn/stokes"
+	"example.org/overturn/stokes/staggered"
+)
+
+// A newton solves R(T, v(T)) = 0, where R is the rate of change of heat per
+// volume and v(T) the Stokes flow that goes with T.
+//
+// R is linear in T for a given flow, R = source − A(v) T, and linear in the flow
+// for a given T. The linearised system for the correction d is
+//
+//	A(v) d + B v′ = R,   B u = R(T, 0) − R(T, u),
+//
+// with v′ the change of the flow: the Stokes flow at fixed viscosity under the
+// buoyancy of d and the stress that d causes by changing the viscosity. With
+// d = A⁻¹y it becomes y + B v′(A⁻¹y) = R, the identity plus a smoothing
+// operator, on which GMRES needs a number of steps that does not depend on the
+// grid.
+type newton struct {
+	sys      *system
+	settings SteadySettings
+	linear   *stokes.Solver // for v′: walls at rest, a loose tolerance
+	krylov   *gmres.Solver
+
+	temperature *staggered.Scalar
+	flow        *staggered.Flow
+	rate        *staggered.Scalar // R at temperature
+
+	resting  *staggered.Scalar // R(T, 0)
+	response *staggered.Flow   // v′
+	stress   *stressResponse   // nil where the viscosity does not depend on T
+
+	step, y, trial *staggered.Scalar
+	before         *staggered.Scalar // R at temperature while a trial is made
+	trialFlow      *staggered.Flow
+	ctx            context.Context // of the solve that runs
+}
+
+// Tolerances inside a Newton step: it gains a factor of a hundred, so that the
+// products need not be better than a tenth of a per cent of that.
+const (
+	forcing         = 1e-2
+	linearTolerance = 1e-5
+)
+
+func newNewton(sys *system, s SteadySettings) (*newton, error) {
+	inner := *s.Stokes
+	inner.Tolerance = linearTolerance
+	inner.Monitor = nil
+	linear, err := stokes.NewSolver(sys.Grid, sys.Walls.AtRest(), &inner)
+	if err != nil {
+		return nil, fmt.Errorf("convection: %w", err)
+	}
+	g := sys.Grid
+	n := &newton{
+		sys: sys, settings: s, linear: linear,
+		krylov:   gmres.New(g.NX()*g.NZ(), s.MaxDirections),
+		rate:     staggered.NewScalar(g),
+		resting:  staggered.NewScalar(g),
+		response: staggered.NewFlow(g),
+		step:     staggered.NewScalar(g),
+		y:        staggered.NewScalar(g),
+		trial:    staggered.NewScalar(g),
+		before:   staggered.NewScalar(g),
+
+		flow:      staggered.NewFlow(g),
+		trialFlow: staggered.NewFlow(g),
+	}
+	if sys.Viscosity != nil {
+		n.stress = newStressResponse(sys)
+	}
+	return n, nil
+}
+
+// Limits of the implicit steps in time, as root-mean-square changes of the
+// temperature in ranges: one that would change it by more than tooLarge is
+// repeated shorter, and the next one aims at aim.
+const (
+	aim      = 0.04
+	tooLarge = 0.15
+	// firstImplicit is the first step, longNewton the one that is as good as
+	// infinite, in diffusion times of the layer.
+	firstImplicit = 1e-3
+	longNewton    = 10
+)
+
+// solve improves a temperature in place, by implicit steps in time first if
+// the guess is far from steady.
+func (n *newton) solve(ctx context.Context, temperature *staggered.Scalar, far bool) (*Solution, error) {
+	n.ctx, n.temperature = ctx, temperature
+	sol := &Solution{Temperature: temperature, Flow: n.flow}
+	if err := n.evaluate(temperature, n.flow); err != nil {
+		return nil, err
+	}
+	sol.Residual = n.residual(n.rate)
+	shift := 0.0
+	if far {
+		shift = n.sys.rate() / firstImplicit
+	}
+	var failure error
+	for sol.Residual > n.settings.Tolerance {
+		if sol.Newton >= n.settings.MaxNewton {
+			failure = fmt.Errorf("convection: %w after %d Newton steps: residual %.1e, tolerance %.1e",
+				ErrNotSteady, sol.Newton, sol.Residual, n.settings.Tolerance)
+			break
+		}
+		var products int
+		var err error
+		if shift > 0 {
+			products, shift, err = n.implicitStep(shift)
+		} else if products, err = n.improve(sol.Residual); errors.Is(err, ErrNotSteady) && sol.Newton == 0 {
+			// The guess was further off than it seemed.
+			shift, err = n.sys.rate()/firstImplicit, nil
+		}
+		if err != nil {
+			failure = err
+			break
+		}
+		sol.Newton++
+		sol.Krylov += products
+		sol.Residual = n.residual(n.rate)
+		if n.settings.Monitor != nil {
+			n.settings.Monitor(SteadyProgress{Grid: n.sys.Grid, Newton: sol.Newton, Krylov: products, Residual: sol.Residual})
+		}
+	}
+	var err error
+	sol.Diagnostics, err = newSampler(n.sys).diagnose(temperature, n.flow)
+	return sol, errors.Join(failure, err)
+}
+
+// implicitStep takes one linearly implicit Euler step over 1/shift and returns
+// the shift for the next, zero when Newton's method can take over.
+func (n *newton) implicitStep(shift float64) (products int, next float64, err error) {
+	for range 20 {
+		count, err := n.correction(shift, 5*forcing)
+		products += count
+		if err != nil {
+			return products, shift, err
+		}
+		size := n.step.RMS() / n.extent()
+		if size <= tooLarge {
+			accepted, err := n.try(1, math.Inf(1))
+			if err != nil {
+				return products, shift, err
+			}
+			if accepted {
+				shift *= min(4, max(0.4, size/aim))
+				if shift*longNewton < n.sys.rate() {
+					shift = 0
+				}
+				return products, shift, nil
+			}
+		}
+		shift *= 4
+	}
+	return products, shift, fmt.Errorf("convection: %w: implicit steps became too short", ErrNotSteady)
+}
+
+// evaluate solves for the flow of a temperature and stores R in n.rate.
+func (n *newton) evaluate(t *staggered.Scalar, flow *staggered.Flow) error {
+	if _, err := n.sys.solveFlow(n.ctx, t, flow); err != nil {
+		return err
+	}
+	if err := n.sys.heat.RateTo(n.rate, t, flow); err != nil {
+		return fmt.Errorf("convection: %w", err)
+	}
+	return nil
+}
+
+// residual is the root mean square of a rate in temperature ranges per
+// diffusion time.
+func (n *newton) residual(rate *staggered.Scalar) float64 {
+	return rate.RMS() / (n.sys.HeatCapacity * n.extent() * n.sys.rate())
+}
+
+// extent is the range of the temperature, 1 where it is uniform.
+func (n *newton) extent() float64 {
+	lowest, highest := n.temperature.Extrema()
+	if highest.Value == lowest.Value {
+		return 1
+	}
+	return highest.Value - lowest.Value
+}
+
+// improve takes one Newton step, shortened where the residual would not fall,
+// and returns the number of products it cost.
+func (n *newton) improve(residual float64) (int, error) {
+	products, err := n.correction(0, forcing)
+	if err != nil {
+		return products, err
+	}
+	for share := 1.0; share > 1e-3; share /= 2 {
+		if accepted, err := n.try(share, (1-0.1*share)*residual); accepted || err != nil {
+			return products, err
+		}
+	}
+	return products, fmt.Errorf("convection: %w: no Newton step lowers the residual %.1e", ErrNotSteady, residual)
+}
+
+// correction stores in n.step the solution of the linearised system with C·shift
+// added to A.
+func (n *newton) correction(shift, tolerance float64) (int, error) {
+	if err := n.linearise(shift); err != nil {
+		return 0, fmt.Errorf("convection: %w", err)
+	}
+	products, err := n.krylov.Solve(n.ctx, n.y.Values, n.rate.Values, n.product, tolerance)
+	if err != nil && !errors.Is(err, gmres.ErrNotConverged) {
+		return products, err
+	}
+	if err := n.sys.heat.SolveTo(n.step, n.y); err != nil {
+		return products, fmt.Errorf("convection: %w", err)
+	}
+	return products, nil
+}
+
+// try moves a share of n.step and keeps the new state if its residual is at
+// most bound.
+func (n *newton) try(share, bound float64) (bool, error) {
+	floats.AddScaledTo(n.trial.Values, n.temperature.Values, share, n.step.Values)
+	if err := n.trialFlow.CopyFrom(n.flow); err != nil {
+		return false, err
+	}
+	copy(n.before.Values, n.rate.Values)
+	if err := n.evaluate(n.trial, n.trialFlow); err != nil {
+		copy(n.rate.Values, n.before.Values)
+		// Without a flow the step went too far: temperatures beyond sense.
+		return false, n.ctx.Err()
+	}
+	if !(n.residual(n.rate) <= bound) {
+		copy(n.rate.Values, n.before.Values)
+		return false, nil
+	}
+	copy(n.temperature.Values, n.trial.Values)
+	return true, n.flow.CopyFrom(n.trialFlow)
+}
+
+// linearise prepares the products at the present temperature and flow.
+func (n *newton) linearise(shift float64) error {
+	if err := n.sys.heat.RateTo(n.resting, n.temperature, nil); err != nil {
+		return err
+	}
+	if n.stress != nil {
+		n.stress.prepare(n.temperature, n.flow)
+	}
+	n.response.Velocity().SetAll(0, 0)
+	n.response.Pressure().SetAll(0)
+	return n.sys.heat.FactorShifted(n.flow, shift)
+}
+
+// product stores y + B v′(A⁻¹y) in dst.
+func (n *newton) product(dst, y []float64) error {
+	copy(n.step.Values, y)
+	if err := n.sys.heat.SolveTo(n.step, n.step); err != nil {
+		return err
+	}
+	if err := n.respond(n.step); err != nil {
+		return err
+	}
+	if err := n.sys.heat.RateTo(n.trial, n.temperature, n.response); err != nil {
+		return err
+	}
+	for j, v := range y {
+		dst[j] = v + n.resting.Values[j] - n.trial.Values[j]
+	}
+	return nil
+}
+
+// respond finds the change of the flow under a change of the temperature.
+func (n *newton) respond(d *staggered.Scalar) error {
+	n.sys.buoyancy.FillVertical(d, n.sys.Rayleigh)
+	if n.stress != nil {
+		if err := n.stress.addTo(n.sys.buoyancy, d); err != nil {
+			return err
+		}
+	}
+	_, err := n.linear.Solve(n.ctx, n.response, n.viscosity(), n.sys.buoyancy)
+	return err
+}
+
+// viscosity returns that of the present temperature.
+func (n *newton) viscosity() *staggered.Scalar {
+	if n.stress == nil {
+		return nil
+	}
+	return n.stress.viscosity
+}
+
+// A stressResponse is the force that a flow feels when the viscosity changes
+// with the temperature, ∇·(2 δη ε), by a central difference in the direction of
+// the change of temperature.
+type stressResponse struct {
+	sys         *system
+	temperature *staggered.Scalar
+	flow        *staggered.Flow // velocity alone: pressure would only cancel
+	viscosity   *staggered.Scalar
+
+	warmer, eta  *staggered.Scalar
+	above, below *staggered.Vector
+}
+
+// differenceStep is the largest change of temperature in the difference, in
+// temperature ranges: its square is the relative error.
+const differenceStep = 1e-4
+
+func newStressResponse(sys *system) *stressResponse {
+	g := sys.Grid
+	return &stressResponse{
+		sys: sys, viscosity: staggered.NewScalar(g),
+		warmer: staggered.NewScalar(g), eta: staggered.NewScalar(g),
+		above: staggered.NewVector(g), below: staggered.NewVector(g),
+	}
+}
+
+func (r *stressResponse) prepare(t *staggered.Scalar, flow *staggered.Flow) {
+	r.temperature = t
+	r.flow = &staggered.Flow{Grid: flow.Grid, VX: flow.VX, VZ: flow.VZ, P: make([]float64, len(flow.P))}
+	r.sys.viscosityTo(r.viscosity, t)
+}
+
+// addTo adds the force for the change d of the temperature.
+func (r *stressResponse) addTo(force *staggered.Vector, d *staggered.Scalar) error {
+	largest := floats.Norm(d.Values, math.Inf(1))
+	if largest == 0 {
+		return nil
+	}
+	lowest, highest := r.temperature.Extrema()
+	h := differenceStep * max(highest.Value-lowest.Value, math.SmallestNonzeroFloat64) / largest
+	if err := r.apply(r.above, h, d); err != nil {
+		return err
+	}
+	if err := r.apply(r.below, -h, d); err != nil {
+		return err
+	}
+	scale := 0.5 / h
+	for j := range force.X {
+		force.X[j] += scale * (r.above.X[j] - r.below.X[j])
+	}
+	for j := range force.Z {
+		force.Z[j] += scale * (r.above.Z[j] - r.below.Z[j])
+	}
+	return nil
+}
+
+// apply stores the viscous force at the temperature plus h d.
+func (r *stressResponse) apply(dst *staggered.Vector, h float64, d *staggered.Scalar) error {
+	floats.AddScaledTo(r.warmer.Values, r.temperature.Values, h, d.Values)
+	r.sys.viscosityTo(r.eta, r.warmer)
+	return r.sys.stokes.ApplyTo(dst, r.flow, r.eta)
+}

@@ -1,0 +1,277 @@
+package convection
+
+import (
+	"context"
+	"errors"
+	"fmt"
+	"math"
+
+	"example.org/overturn/heat"
+	"example.org/overturn/stokes"
+	"example.org/overturn/stokes/staggered"
+)
+
+// Defaults of [SteadySettings].
+const (
+	DefaultSteadyTolerance = 1e-6
+	DefaultMaxNewton       = 200
+	DefaultMaxDirections   = 150
+	DefaultMaxApproach     = 50000
+
+	// DefaultSteadyStokesTolerance is that of the Stokes solves behind the
+	// residual, which can be no smaller than their error times the velocity.
+	DefaultSteadyStokesTolerance = 1e-10
+)
+
+// ErrNotSteady reports that no steady state was found. Usual causes: the layer
+// is time-dependent at this Rayleigh number, or the box holds more rolls than
+// are stable in it. The solution returned with it is the best one met.
+var ErrNotSteady = errors.New("no steady state")
+
+// SteadySettings tunes [Steady] and [Refine]. A nil *SteadySettings, or a zero
+// field, means the default.
+type SteadySettings struct {
+	// Tolerance is the residual at which a state counts as steady: the root
+	// mean square of ∂T/∂t, in temperature ranges per diffusion time of the
+	// layer. Default 1e-6.
+	Tolerance float64
+
+	// MaxNewton bounds the Newton steps on each grid, implicit steps in time
+	// included. Default 200.
+	MaxNewton int
+
+	// MaxDirections bounds the Krylov directions of one Newton step, each of
+	// which takes 8 bytes a cell. Default 150.
+	MaxDirections int
+
+	// MaxApproach bounds the time steps on the coarsest grid in which
+	// convection sets in. Default 50000.
+	MaxApproach int
+
+	// Guess is a temperature near the steady state. Not nil, it replaces the
+	// approach in time and the coarser grids: Newton's method starts from it on
+	// the grid of the problem.
+	Guess *staggered.Scalar
+
+	// Monitor, if not nil, is called after every Newton step.
+	Monitor func(SteadyProgress)
+
+	// Stokes tunes the flow solver. Its Tolerance is 1e-10 by default here.
+	Stokes *stokes.Settings
+
+	// Workers is the number of goroutines of the heat kernel. Default
+	// runtime.GOMAXPROCS(0).
+	Workers int
+}
+
+// SteadyProgress says where a search for a steady state is.
+type SteadyProgress struct {
+	Grid     *staggered.Grid
+	Newton   int     // steps taken on this grid
+	Krylov   int     // products taken for the last step
+	Residual float64 // as for SteadySettings.Tolerance
+}
+
+// A Solution is a steady state.
+type Solution struct {
+	Diagnostics
+
+	Temperature *staggered.Scalar
+	Flow        *staggered.Flow
+
+	Residual float64 // as for SteadySettings.Tolerance
+	Newton   int     // steps on the last grid
+	Krylov   int     // products with the linearised system on the last grid
+}
+
+// String gives the solution in one line.
+func (s *Solution) String() string {
+	return fmt.Sprintf("steady on %v: Nu %.6f (top) %.6f (bottom), v_rms %.7g, residual %.1e after %d Newton steps",
+		s.Temperature.Grid, s.NuTop, s.NuBottom, s.RMSVelocity, s.Residual, s.Newton)
+}
+
+func (s *SteadySettings) withDefaults() (SteadySettings, error) {
+	var c SteadySettings
+	if s != nil {
+		c = *s
+	}
+	if c.Tolerance == 0 {
+		c.Tolerance = DefaultSteadyTolerance
+	}
+	if c.MaxNewton == 0 {
+		c.MaxNewton = DefaultMaxNewton
+	}
+	if c.MaxDirections == 0 {
+		c.MaxDirections = DefaultMaxDirections
+	}
+	if c.MaxApproach == 0 {
+		c.MaxApproach = DefaultMaxApproach
+	}
+	var inner stokes.Settings
+	if c.Stokes != nil {
+		inner = *c.Stokes
+	}
+	if inner.Tolerance == 0 {
+		inner.Tolerance = DefaultSteadyStokesTolerance
+	}
+	c.Stokes = &inner
+	switch {
+	case !(c.Tolerance > 0) || math.IsInf(c.Tolerance, 1):
+		return c, fmt.Errorf("convection: SteadySettings.Tolerance is %v, want > 0", c.Tolerance)
+	case c.MaxNewton < 0:
+		return c, fmt.Errorf("convection: SteadySettings.MaxNewton is %d, want >= 0", c.MaxNewton)
+	case c.MaxDirections < 0:
+		return c, fmt.Errorf("convection: SteadySettings.MaxDirections is %d, want >= 0", c.MaxDirections)
+	case c.MaxApproach < 0:
+		return c, fmt.Errorf("convection: SteadySettings.MaxApproach is %d, want >= 0", c.MaxApproach)
+	}
+	return c, nil
+}
+
+// kernels returns the settings of the kernels with one for the flow.
+func (s *SteadySettings) kernels(flow *stokes.Settings) Settings {
+	return Settings{Stokes: flow, Heat: &heat.Settings{Advection: heat.Central, Workers: s.Workers}}
+}
+
+// Steady finds a steady state of the problem with central advection.
+//
+// Starting from the initial state it steps in time on a coarse grid, made of
+// every second, fourth, ... node of the problem's, until convection has set in,
+// goes on with implicit steps that grow as the state calms down (pseudo-
+// transient continuation, Kelley & Keyes 1998) until they are Newton steps, and
+// follows the solution from grid to grid. So the state found is one that the
+// initial state leads to, and a layer that does not convect is found at rest.
+// Whether the state is stable in time is not asked.
+func Steady(ctx context.Context, p Problem, s *SteadySettings) (*Solution, error) {
+	c, err := s.withDefaults()
+	if err != nil {
+		return nil, err
+	}
+	solutions, err := steadySequence(ctx, p, c, 1)
+	if len(solutions) == 0 {
+		return nil, err
+	}
+	return solutions[len(solutions)-1], err
+}
+
+// approachRows is the number of rows above which a grid is not coarse enough
+// for the approach in time.
+const approachRows = 48
+
+// steadySequence solves on the problem's grid and at least so many coarser
+// ones, coarse to fine.
+func steadySequence(ctx context.Context, p Problem, s SteadySettings, grids int) ([]*Solution, error) {
+	p, err := p.withDefaults()
+	if err != nil {
+		return nil, err
+	}
+	sequence := []*staggered.Grid{p.Grid}
+	for len(sequence) < grids || s.Guess == nil && worthCoarsening(sequence[0]) {
+		g, err := coarsen(sequence[0])
+		if err != nil {
+			return nil, err
+		}
+		sequence = append([]*staggered.Grid{g}, sequence...)
+	}
+	var solutions []*Solution
+	guess := s.Guess
+	for _, g := range sequence {
+		level := p
+		level.Grid = g
+		sol, err := steadyOn(ctx, level, s, guess)
+		if sol != nil {
+			solutions = append(solutions, sol)
+		}
+		if err != nil {
+			return solutions, err
+		}
+		guess = sol.Temperature
+	}
+	return solutions, nil
+}
+
+// worthCoarsening reports whether the approach should be made on a grid of half
+// the cells.
+func worthCoarsening(g *staggered.Grid) bool {
+	nx, nz := g.Cells()
+	return min(nx, nz) > approachRows
+}
+
+// coarsen returns the grid of every second node. Nodes, not cells, are dropped,
+// so that a smooth gradation stays one.
+func coarsen(g *staggered.Grid) (*staggered.Grid, error) {
+	return staggered.NewGrid(everySecond(g.XNodes()), everySecond(g.ZNodes()))
+}
+
+// everySecond keeps the ends; an odd last cell joins its neighbour.
+func everySecond(nodes []float64) []float64 {
+	n := (len(nodes) - 1) / 2
+	half := make([]float64, 0, n+1)
+	for i := range n {
+		half = append(half, nodes[2*i])
+	}
+	return append(half, nodes[len(nodes)-1])
+}
+
+// steadyOn solves on one grid, from a guess or else from the initial state.
+func steadyOn(ctx context.Context, p Problem, s SteadySettings, guess *staggered.Scalar) (*Solution, error) {
+	t := staggered.NewScalar(p.Grid)
+	if guess != nil {
+		if err := checkTemperature(guess); err != nil {
+			return nil, err
+		}
+		transfer(t, guess)
+	} else if err := approach(ctx, p, s, t); err != nil {
+		return nil, err
+	}
+	sys, err := newSystem(p, s.kernels(s.Stokes))
+	if err != nil {
+		return nil, err
+	}
+	n, err := newNewton(sys, s)
+	if err != nil {
+		return nil, err
+	}
+	return n.solve(ctx, t, guess == nil)
+}
+
+const (
+	// The approach lasts until fluid has crossed the layer so many times, or
+	// for this share of the diffusion time: by then what the initial state
+	// excited has decayed or grown.
+	approachCrossings = 1.5
+	approachTime      = 0.05
+	// approachTolerance is enough for the Stokes solves on the way.
+	approachTolerance = 1e-6
+)
+
+// approach stores in t the initial state, carried in time until convection has
+// set in and no longer speeds up. An implicit method with long steps, started
+// earlier, would be drawn to the state that is being left.
+func approach(ctx context.Context, p Problem, s SteadySettings, t *staggered.Scalar) error {
+	inner := *s.Stokes
+	inner.Tolerance = approachTolerance
+	kernels := s.kernels(&inner)
+	kernels.Courant = 0.9
+	m, err := New(p, &kernels)
+	if err != nil {
+		return err
+	}
+	if err := m.ensureFlow(ctx); err != nil {
+		return err
+	}
+	rate, height := m.sys.rate(), m.sys.Grid.Height()
+	speed, travelled := m.flow.RMS(), 0.0
+	for range s.MaxApproach {
+		if err := m.advance(ctx); err != nil {
+			return err
+		}
+		before := speed
+		speed = m.flow.RMS()
+		travelled += speed * m.last / height
+		if speed <= before && (travelled >= approachCrossings || m.time*rate >= approachTime) {
+			break
+		}
+	}
+	return t.CopyFrom(m.temperature)
+}
