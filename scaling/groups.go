@@ -58,7 +58,7 @@ type Groups struct {
 // Group names one of the [Groups].
 type Group int
 
-// The groups, and three that are made of others.
+// The groups, and some that are made of others.
 const (
 	RayleighNumber Group = iota + 1
 	HeatingRayleighNumber
@@ -76,6 +76,7 @@ const (
 	SlotRayleighNumber     // Ra Pr/(0.2+Pr)
 	InclinedRayleighNumber // Ra cos φ
 	CellPeriod             // width of a pair of rolls, twice the CellWidth
+	LidParameter           // θ/(n+1), above which a lid stagnates
 	lastGroup
 )
 
@@ -96,6 +97,7 @@ var groupNames = [...]string{
 	SlotRayleighNumber:        "Ra Pr/(0.2+Pr)",
 	InclinedRayleighNumber:    "Ra cos φ",
 	CellPeriod:                "cell period",
+	LidParameter:              "θ/(n+1)",
 }
 
 // String returns the symbol or name of the group.
@@ -147,6 +149,8 @@ func (g Group) Of(v Groups) float64 {
 		return v.Rayleigh * math.Cos(v.Inclination)
 	case CellPeriod:
 		return 2 * v.CellWidth
+	case LidParameter:
+		return v.FrankKamenetskii / (StressExponent.Of(v) + 1)
 	default:
 		return 0
 	}

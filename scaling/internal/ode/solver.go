@@ -116,6 +116,10 @@ func (s *Solver) firstStep() float64 {
 // Time returns the end of the last step.
 func (s *Solver) Time() float64 { return s.t }
 
+// End returns the unknowns and the integrals at the end of the last step. The
+// next step changes them.
+func (s *Solver) End() (y, q []float64) { return s.y, s.q }
+
 // Done reports whether the integration has arrived.
 func (s *Solver) Done() bool { return s.t == s.end }
 
