@@ -30,6 +30,9 @@ func cellFlow(g *staggered.Grid, speed float64) *staggered.Flow {
 
 // Where a long run in time ends is what Steady finds at once.
 func TestSteadyEqualsLongTransient(t *testing.T) {
+	if testing.Short() {
+		t.Skip("takes seconds")
+	}
 	everyMethod(t, func(t *testing.T, s Settings) {
 		for _, sides := range []string{"TF", "PP"} {
 			m := newManufactured()
