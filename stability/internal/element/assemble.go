@@ -73,10 +73,10 @@ type assembler struct {
 }
 
 func newAssembler(l *Layout, op *Operator) *assembler {
-	points := l.Degree + op.Excess
-	n := l.Degree + 2
+	ref := referenceOf(l.Degree, l.Degree+op.Excess)
+	points, n := len(ref.x), l.Degree+2
 	a := &assembler{
-		layout: l, op: op, ref: referenceOf(l.Degree, points),
+		layout: l, op: op, ref: ref,
 		values:  make([][]float64, len(op.Coefficients)),
 		product: make([]float64, n*n),
 		left:    make([]float64, n*points),
@@ -183,11 +183,11 @@ func (a *assembler) endUnknown(field, order, end int) (node, constant int) {
 	return node, s.constant
 }
 
-// A place remembers which blocks the numbers of a term go to: the constants of
-// its row and column field, weighted with 1/k, lower the power by one each.
+// A place remembers which blocks the numbers of a term go to: the weighted
+// constants of its row and column field lower the power of k by one each.
 type place struct {
 	part, power, row, col int
-	block                 [3]int // by the number of constants, -1 for not yet known
+	block                 [3]int // by the number of weighted constants, -1 for not yet known
 }
 
 func newPlace(part, power, row, col int) place {
@@ -201,10 +201,10 @@ func (a *assembler) add(at *place, row, col int, v float64) {
 		return
 	}
 	constants := 0
-	if row == a.layout.spans[at.row].constant {
+	if row == a.layout.spans[at.row].constant && a.layout.Fields[at.row].Weighted {
 		constants++
 	}
-	if col == a.layout.spans[at.col].constant {
+	if col == a.layout.spans[at.col].constant && a.layout.Fields[at.col].Weighted {
 		constants++
 	}
 	i := at.block[constants]

@@ -10,10 +10,14 @@ type Field struct {
 	// 0 none, 1 the value is zero, 2 the slope is zero too (C1 only).
 	Fixed [2]int
 
-	// Constant makes the constant function one of the basis, weighted with
-	// 1/k. A C0 field whose operator is singular at k = 0 for want of a fixed
-	// value then keeps a regular matrix in the limit k → 0.
+	// Constant makes the constant function one of the basis: the choice for
+	// a C0 field without fixed values, whose constant part is (nearly) in the
+	// null space of its operator and would be lost among differences.
 	Constant bool
+
+	// Weighted multiplies the constant with 1/k. An operator that is singular
+	// at k = 0 then keeps a regular matrix in the limit k → 0.
+	Weighted bool
 }
 
 // A Layout numbers the unknowns of several fields on a mesh. It is immutable
@@ -103,6 +107,10 @@ func (s *span) leftOut(f Field, node, last, d int) bool {
 	}
 	return false
 }
+
+// Constant returns the unknown that multiplies the constant function of a
+// field, -1 for none.
+func (l *Layout) Constant(field int) int { return l.spans[field].constant }
 
 // localScale is what a local function is multiplied with on an element of
 // half length h: slopes are slopes in z.

@@ -4,7 +4,7 @@ import (
 	"math"
 	"sync"
 
-	"gonum.org/v1/gonum/integrate/quad"
+	"example.org/overturn/stability/internal/gauss"
 )
 
 // Class is the smoothness of a field from one element to the next.
@@ -40,6 +40,8 @@ type referenceKey struct{ p, points int }
 
 var references sync.Map // of referenceKey to *reference
 
+// referenceOf returns the reference for degree p with a rule of the given
+// number of points or a few more.
 func referenceOf(p, points int) *reference {
 	key := referenceKey{p, points}
 	if r, ok := references.Load(key); ok {
@@ -50,8 +52,9 @@ func referenceOf(p, points int) *reference {
 }
 
 func newReference(p, points int) *reference {
-	r := &reference{x: make([]float64, points), w: make([]float64, points)}
-	quad.Legendre{}.FixedLocations(r.x, r.w, -1, 1)
+	r := &reference{}
+	r.x, r.w = gauss.Rule(points)
+	points = len(r.x)
 	column := make([]float64, p+2)
 	legendre := make([]float64, p+1)
 	for _, c := range []Class{C0, C1} {

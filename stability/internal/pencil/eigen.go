@@ -77,7 +77,7 @@ func (w *Workspace) invert(pt *Point) error {
 	for i, r := range s.where {
 		s.inverse[r*m+i] = 1
 	}
-	lapack64.Getrs(blas.NoTrans, a, blas64.General{Rows: n, Cols: m, Stride: m, Data: s.inverse}, s.pivot)
+	lapack64.Getrs(blas.NoTrans, a, blas64.General{Rows: n, Cols: m, Stride: max(m, 1), Data: s.inverse}, s.pivot)
 	return nil
 }
 
@@ -186,4 +186,21 @@ func (w *Workspace) GrowthEigenvalues(pt Point) ([]complex128, error) {
 		return imag(values[i]) > imag(values[j])
 	})
 	return values, nil
+}
+
+// SolveLinear returns x with J x = b at a point of real σ, where J is regular.
+// Both are in the basis that the blocks were made with.
+func (w *Workspace) SolveLinear(pt Point, b []float64) ([]float64, error) {
+	w.eigen.where = w.eigen.where[:0]
+	if err := w.invert(&pt); err != nil {
+		return nil, err
+	}
+	n := w.p.n
+	x := make([]float64, n)
+	copy(x, b)
+	w.p.Unscale(x) // J is D J₀ D with D the scale
+	lapack64.Getrs(blas.NoTrans, blas64.General{Rows: n, Cols: n, Stride: n, Data: w.eigen.matrix},
+		blas64.General{Rows: n, Cols: 1, Stride: 1, Data: x}, w.eigen.pivot)
+	w.p.Unscale(x)
+	return x, nil
 }

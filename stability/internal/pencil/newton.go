@@ -121,13 +121,26 @@ func (c Curve) curvature(j *Jet, slope [2]float64) [2]float64 {
 	return c.linear(j, f)
 }
 
+// drift returns the change of the slope that a change d of the unknowns makes
+// at fixed k.
+func (c Curve) drift(j *Jet, slope, d [2]float64) [2]float64 {
+	f := complex(0, 0)
+	us := unknowns[c.Kind]
+	for i, u := range us {
+		v := u.factor * complex(d[i], 0)
+		f += j.Second[AlongK][u.along] * v
+		for l, u2 := range us {
+			f += j.Second[u.along][u2.along] * v * u2.factor * complex(slope[l], 0)
+		}
+	}
+	return c.linear(j, f)
+}
+
 const (
 	maxNewton = 30
-	// A relative step below settled leaves an error of its square times a
-	// moderate factor, which is round-off.
-	settled = 1e-9
-	// A step that is below stagnant and no longer shrinks is round-off too.
-	stagnant = 1e-6
+	// A relative step below settled leaves an error of about its square. One
+	// more step makes that round-off, in the solution vector too.
+	settled = 1e-7
 )
 
 // Solve follows a curve to a solution at the wavenumber of a nearby point.
@@ -137,23 +150,27 @@ func (w *Workspace) Solve(c Curve, pt Point) (Solution, error) {
 	s, last := Solution{Point: pt}, math.Inf(1)
 	for i := range maxNewton {
 		j := w.jet(&s.Point, c.Drive, false)
-		d := c.linear(j, j.G)
-		if i == 0 { // the border is arbitrary yet, and with it the scale of g
-			w.adoptBorder()
-			continue
+		if i > 0 { // at first the border is arbitrary, and with it the scale of g
+			s.Residual = c.move(&s.Point, c.linear(j, j.G))
+			if !(s.Residual < math.MaxFloat64) {
+				break
+			}
+			if last < settled {
+				c.finish(&s, j)
+				return s, nil
+			}
+			last = s.Residual
 		}
-		s.Residual = c.move(&s.Point, d)
-		if math.IsNaN(s.Residual) || math.IsInf(s.Residual, 0) {
-			break
-		}
-		if s.Residual < settled || s.Residual < stagnant && s.Residual >= last {
-			c.finish(&s, j)
-			return s, nil
-		}
-		last = s.Residual
 		w.adoptBorder()
 	}
 	return s, ErrDiverged
+}
+
+// Bend completes the solution that Solve has just returned with its curvature.
+func (w *Workspace) Bend(c Curve, s *Solution) {
+	j := &w.derivative
+	w.curvature(&s.Point, c.Drive, j)
+	s.Curvature = c.curvature(j, c.slope(j))[0]
 }
 
 // finish fills in what follows from the last jet.
@@ -170,37 +187,36 @@ func (w *Workspace) Extremum(c Curve, pt Point, lo, hi float64) (Solution, error
 	s, last := Solution{Point: pt}, math.Inf(1)
 	for i := range maxNewton {
 		j := w.jet(&s.Point, c.Drive, i > 0)
-		if i == 0 {
-			w.adoptBorder()
-			continue
+		if i > 0 {
+			curvature, ok := c.stepToExtremum(&s, j, lo, hi)
+			if !ok {
+				break
+			}
+			if last < settled {
+				c.finish(&s, j)
+				s.Slope, s.Curvature = 0, curvature
+				return s, nil
+			}
+			last = s.Residual
 		}
-		d, u1 := c.linear(j, j.G), c.slope(j)
-		u2 := c.curvature(j, u1)
-		dk := -u1[0] / u2[0]
-		if s.K+dk <= lo || s.K+dk >= hi || !finite(complex(dk, 0)) {
-			return s, ErrDiverged
-		}
-		for a := range d {
-			d[a] += dk * (u1[a] + dk*u2[a]/2)
-		}
-		s.K += dk
-		s.Residual = c.move(&s.Point, d) + math.Abs(dk/s.K)
-		if math.IsNaN(s.Residual) || math.IsInf(s.Residual, 0) {
-			break
-		}
-		if s.Residual < settled || s.Residual < stagnant && s.Residual >= last {
-			c.finish(&s, j)
-			s.Slope, s.Curvature = 0, u2[0]
-			return s, nil
-		}
-		last = s.Residual
 		w.adoptBorder()
 	}
 	return s, ErrDiverged
 }
 
-// CurvatureAt returns the second derivative in k of the objective at a solution.
-func (w *Workspace) CurvatureAt(c Curve, s *Solution) float64 {
-	j := w.jet(&s.Point, c.Drive, true)
-	return c.curvature(j, c.slope(j))[0]
+// stepToExtremum is one step of Newton's method for g = 0 and a zero slope. It
+// is refused if it leads out of the interval.
+func (c Curve) stepToExtremum(s *Solution, j *Jet, lo, hi float64) (curvature float64, ok bool) {
+	d, u1 := c.linear(j, j.G), c.slope(j)
+	u2 := c.curvature(j, u1)
+	dk := -(u1[0] + c.drift(j, u1, d)[0]) / u2[0]
+	if !(s.K+dk > lo && s.K+dk < hi) {
+		return 0, false
+	}
+	for a := range d {
+		d[a] += dk * (u1[a] + dk*u2[a]/2)
+	}
+	s.K += dk
+	s.Residual = c.move(&s.Point, d) + math.Abs(dk/s.K)
+	return u2[0], s.Residual < math.MaxFloat64
 }

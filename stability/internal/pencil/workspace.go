@@ -1,8 +1,6 @@
 package pencil
 
 import (
-	"math"
-
 	"gonum.org/v1/gonum/blas"
 	"gonum.org/v1/gonum/blas/blas64"
 	"gonum.org/v1/gonum/floats"
@@ -226,9 +224,3 @@ func (w *Workspace) Vector() (re, im []float64) {
 // Scaled returns the real part of the solution in scaled unknowns, in which
 // its decay can be judged. It is valid until the next call.
 func (w *Workspace) Scaled() []float64 { return w.x[:w.p.n] }
-
-// finite reports whether v has neither a NaN nor an infinity.
-func finite(v complex128) bool {
-	s := real(v) + imag(v)
-	return !math.IsNaN(s) && !math.IsInf(s, 0)
-}

@@ -6,7 +6,7 @@ import (
 	"slices"
 	"sort"
 
-	"gonum.org/v1/gonum/integrate/quad"
+	"example.org/overturn/stability/internal/gauss"
 )
 
 const (
@@ -57,8 +57,8 @@ func (e *ValueError) Error() string {
 var rule, weight, legendre = newRule()
 
 func newRule() (x, w []float64, p [][points]float64) {
-	x, w, p = make([]float64, points), make([]float64, points), make([][points]float64, points)
-	quad.Legendre{}.FixedLocations(x, w, -1, 1)
+	x, w = gauss.Rule(points)
+	p = make([][points]float64, points)
 	for q := range x {
 		prev, cur := 0.0, 1.0
 		for n := range points {

@@ -1,0 +1,234 @@
+package stability
+
+import (
+	"errors"
+	"math"
+
+	"example.org/overturn/stability/internal/pencil"
+)
+
+const (
+	// hopfRatio separates the values of a number at which growing
+	// oscillations are looked for.
+	hopfRatio = 1.6
+	// hopfWidth is the relative width to which the onset of an oscillation is
+	// bracketed before Newton's method takes over.
+	hopfWidth = 1e-3
+	// hopfReach is how far above the largest value of interest, and hopfDecades
+	// how many powers of ten above the smallest bound, oscillations are
+	// looked for where no stationary onset sets a limit.
+	hopfReach   = 3
+	hopfDecades = 8
+	// growth above round-off, relative to k² + |σ|
+	certainGrowth = 1e-9
+)
+
+// fastestOf returns the fastest growth rate at a value of the number, of all
+// disturbances or of those that oscillate; zero if none grows.
+func (q *question) fastestOf(k, value float64, level int, onlyOscillating bool) (complex128, error) {
+	g := growing{engine: q.engine, drive: q.point(k, value).Drive}
+	found, err := g.rates(k, level)
+	if err != nil {
+		return 0, err
+	}
+	for _, sigma := range found {
+		size := k*k + near(sigma, 0)
+		if real(sigma) <= certainGrowth*size {
+			break
+		}
+		if !onlyOscillating || imag(sigma) > oscillating*size {
+			return sigma, nil
+		}
+	}
+	return 0, nil
+}
+
+// oscillation computes the smallest value of the number up to a limit at which
+// a neutral oscillation of wavenumber k exists, to some digits.
+func (q *question) oscillation(k, limit float64) (sample, error) {
+	for i := 0; ; i++ {
+		s, tail, err := q.oscillationAt(k, limit, i)
+		if err != nil || tail < coarseTail || q.moving.size(i+1) > q.maxUnknowns {
+			return s, err
+		}
+	}
+}
+
+func (q *question) oscillationAt(k, limit float64, level int) (sample, float64, error) {
+	calm := q.bound.lower(k, q.number, q.fixed)
+	if calm >= limit {
+		return none(k), 0, nil
+	}
+	wild, sigma, err := q.firstOscillation(k, calm, limit, level)
+	if err != nil || sigma == 0 {
+		return none(k), 0, err
+	}
+	calm = max(calm, wild/hopfRatio)
+	for wild-calm > hopfWidth*wild {
+		m := (calm + wild) / 2
+		at, err := q.fastestOf(k, m, level, true)
+		if err != nil {
+			return sample{}, 0, err
+		}
+		if at == 0 {
+			calm = m
+		} else {
+			wild, sigma = m, at
+		}
+	}
+	pt := q.point(k, wild)
+	pt.Sigma = complex(0, imag(sigma))
+	lv := q.moving.level(level)
+	s, err := lv.work.Solve(q.curve(pencil.MarginalOscillation), pt)
+	value := s.Drive[driveOf(q.number)]
+	if err != nil || math.Abs(value-wild) > 10*hopfWidth*wild || !(imag(s.Sigma) > 0) {
+		return sample{k: k, value: wild, omega: imag(sigma), slope: math.NaN(), level: level}, 0, nil
+	}
+	return sample{k: k, value: value, omega: imag(s.Sigma), slope: s.Slope, level: level}, lv.tail(), nil
+}
+
+// firstOscillation climbs from a value at which nothing grows to one at which
+// an oscillation does.
+func (q *question) firstOscillation(k, calm, limit float64, level int) (float64, complex128, error) {
+	value := calm
+	if value == 0 {
+		value = limit / 1e6
+	}
+	for value < limit {
+		value = min(value*hopfRatio, limit)
+		sigma, err := q.fastestOf(k, value, level, true)
+		if err != nil || sigma != 0 {
+			return value, sigma, err
+		}
+	}
+	return limit, 0, nil
+}
+
+// oscillatoryMinimum finds the smallest value of the number up to a limit at
+// which some wavenumber has a neutral oscillation. None gives the value +Inf.
+func (q *question) oscillatoryMinimum(limit float64) (answer, error) {
+	c := q.curve(pencil.MarginalOscillation)
+	point := func(at sample) pencil.Point {
+		pt := q.point(at.k, at.value)
+		pt.Sigma = complex(0, at.omega)
+		return pt
+	}
+	s := &search{
+		sample: func(k float64) (sample, error) { return q.oscillation(k, limit) },
+		lower: func(k float64) float64 {
+			if b := q.lowerBound(k); !(b > limit) {
+				return b
+			}
+			return math.Inf(1)
+		},
+		extremum: func(at sample, lo, hi float64) (answer, error) {
+			return q.refine(q.moving, c, point(at), at.level, lo, hi)
+		},
+		point: func(at sample) (answer, error) { return q.refine(q.moving, c, point(at), at.level, 0, 0) },
+	}
+	return s.minimum(limit)
+}
+
+// wavenumbers lists the grid on which something could grow at a value.
+func (q *question) wavenumbers(value float64) []float64 {
+	var ks []float64
+	for k := leastWavenumber; k < largestWavenumber; k *= gridRatio {
+		if q.bound.lower(k, q.number, q.fixed) < value {
+			ks = append(ks, k)
+		}
+	}
+	return ks
+}
+
+// anythingGrows reports whether a disturbance on the grid grows at a value.
+func (q *question) anythingGrows(value float64, level int) (bool, error) {
+	for _, k := range q.wavenumbers(value) {
+		sigma, err := q.fastestOf(k, value, level, false)
+		if err != nil || sigma != 0 {
+			return sigma != 0, err
+		}
+	}
+	return false, nil
+}
+
+// checkLevel is the level of the moving ladder that the checks for growth use.
+const checkLevel = 1
+
+// first finds what happens first as the number grows: the stationary onset, or
+// an oscillation before it.
+func (q *question) first() (answer, error) {
+	still, err := q.stationaryMinimum()
+	var missing *NoOnsetError
+	if err != nil && !errors.As(err, &missing) && !errors.Is(err, ErrNotConverged) {
+		return still, err
+	}
+	if !q.oscillates || still.value == 0 {
+		return still, err
+	}
+	limit := still.value
+	if missing != nil {
+		limit, err = q.valueOfGrowth(missing)
+		if err != nil {
+			return still, err
+		}
+	} else if grows, growErr := q.anythingGrows(limit*(1-1e-6), checkLevel); growErr != nil || !grows {
+		return still, errors.Join(err, growErr)
+	}
+	moving, movingErr := q.oscillatoryMinimum(hopfReach * limit)
+	if movingErr == nil && moving.value < still.value {
+		return moving, nil
+	}
+	if movingErr != nil {
+		return moving, movingErr
+	}
+	return still, err
+}
+
+// valueOfGrowth finds a value of the number at which something grows, although
+// nothing has a stationary onset. If there is none it returns the error given.
+func (q *question) valueOfGrowth(missing *NoOnsetError) (float64, error) {
+	least := math.Inf(1)
+	for k := leastWavenumber; k < largestWavenumber; k *= gridRatio {
+		if b := q.bound.lower(k, q.number, q.fixed); b > 0 {
+			least = min(least, b)
+		}
+	}
+	if math.IsInf(least, 1) {
+		least = 1
+	}
+	for value, i := 10*least, 0; i < hopfDecades; value, i = value*10, i+1 {
+		missing.Largest = value
+		grows, err := q.anythingGrows(value, checkLevel)
+		if err != nil {
+			return 0, err
+		}
+		if grows {
+			return value, nil
+		}
+	}
+	return 0, missing
+}
+
+// checkCalm returns ErrUnstable if something grows while the number is zero.
+func (q *question) checkCalm() error {
+	suspicious := false
+	for k := leastWavenumber; k < largestWavenumber; k *= gridRatio {
+		suspicious = suspicious || q.bound.lower(k, q.number, q.fixed) == 0
+	}
+	if !suspicious {
+		return nil
+	}
+	for k := leastWavenumber; k < largestWavenumber; k *= gridRatio {
+		if q.bound.growth(k, q.point(k, 0).Drive) == 0 {
+			continue
+		}
+		sigma, err := q.fastestOf(k, 0, checkLevel, false)
+		if err != nil {
+			return err
+		}
+		if sigma != 0 {
+			return ErrUnstable
+		}
+	}
+	return nil
+}
