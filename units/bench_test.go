@@ -51,10 +51,10 @@ func BenchmarkFormat(b *testing.B) {
 			}
 		})
 	}
-	b.Run("unit=celsius/digits=5", func(b *testing.B) {
+	b.Run("unit=celsius/digits=4", func(b *testing.B) {
 		b.ReportAllocs()
 		for b.Loop() {
-			if _, err := units.Format(units.Temperature(1600), "°C", 5); err != nil {
+			if _, err := units.Format(units.Temperature(1623.45), "°C", 4); err != nil {
 				b.Fatal(err)
 			}
 		}
