@@ -55,8 +55,7 @@ func (st *Stepper) Grid() *staggered.Grid { return st.op.g }
 
 // SetWalls replaces the values of the walls, for conditions that change in
 // time: set them to those of the middle of the next step to stay second order.
-// Sides cannot become periodic or cease to be. On error the walls are as before
-// or undefined where a function returned a number that is not finite.
+// Sides cannot become periodic or cease to be. On error the walls are as before.
 func (st *Stepper) SetWalls(w Walls) error {
 	if err := w.check(); err != nil {
 		return err
@@ -66,7 +65,7 @@ func (st *Stepper) SetWalls(w Walls) error {
 	}
 	old := st.walls
 	if err := st.op.setWalls(&w); err != nil {
-		return err
+		return errors.Join(err, st.op.setWalls(&old))
 	}
 	st.walls = w
 	if w.conductsAs(&old) {
@@ -157,6 +156,9 @@ func (st *Stepper) RateTo(dst, temperature *staggered.Scalar, flow *staggered.Fl
 	}
 	if err := st.check(temperature, flow); err != nil {
 		return err
+	}
+	if &dst.Values[0] == &temperature.Values[0] {
+		return errors.New("heat: dst is temperature itself, want another field")
 	}
 	var rep Report
 	return st.blame(st.rate(dst.Values, temperature.Values, flow, st.set.Advection, &rep), temperature, flow)

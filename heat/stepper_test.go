@@ -134,6 +134,8 @@ func TestErrorNamesTheNumber(t *testing.T) {
 	flow.VX[8] = math.NaN()
 	_, err = st.Step(context.Background(), staggered.NewScalar(g), flow, 1e-4)
 	require.EqualError(t, err, "heat: VX at (2, 1) is NaN: not finite")
+	_, err = st.Step(context.Background(), staggered.NewScalar(g), nil, 1e-4)
+	require.NoError(t, err, "a bad flow is forgotten")
 }
 
 func TestUnenforcedLimitLetsPass(t *testing.T) {
@@ -153,6 +155,7 @@ func TestOtherMethodsRefuse(t *testing.T) {
 	require.ErrorIs(t, err, ErrSize)
 	require.ErrorIs(t, st.RateTo(bad, good, nil), ErrSize)
 	require.ErrorIs(t, st.RateTo(good, bad, nil), ErrSize)
+	require.ErrorContains(t, st.RateTo(good, good, nil), "want another field")
 	_, err = st.WallFluxTo(make([]float64, 4), staggered.Top, good, nil)
 	require.EqualError(t, err, "heat: dst has 4 values, want 5 along the top wall: wrong size")
 	_, err = st.WallFluxTo(nil, 4, good, nil)
@@ -196,7 +199,12 @@ func TestSetWalls(t *testing.T) {
 		}
 		require.Error(t, st.SetWalls(Walls{Left: Periodic, Right: Periodic}))
 		require.Error(t, st.SetWalls(Walls{Top: Periodic}))
-		require.Error(t, st.SetWalls(Walls{Top: Flux(math.NaN())}))
+		before, after := staggered.NewScalar(g), staggered.NewScalar(g)
+		require.NoError(t, st.SetWalls(walls[2]))
+		require.NoError(t, st.RateTo(before, staggered.NewScalar(g), flow))
+		require.Error(t, st.SetWalls(Walls{Left: Isothermal(1), Top: Flux(math.NaN())}))
+		require.NoError(t, st.RateTo(after, staggered.NewScalar(g), flow))
+		require.Equal(t, before.Values, after.Values, "errors leave the walls alone")
 	})
 }
 

@@ -138,14 +138,16 @@ func (s *sweep) inspect(k int) {
 
 // finite reports whether all numbers that were inspected are.
 func (s *sweep) finite() bool {
-	if slices.Contains(s.sound, false) {
+	if slices.Contains(s.sound, false) || !allFinite(s.heating) {
 		return false
 	}
-	for _, list := range [...][]float64{s.peaks[0], s.peaks[1], s.heating} {
-		for _, v := range list {
-			if !(math.Abs(v) <= math.MaxFloat64) {
-				return false
-			}
+	return s.vx == nil || allFinite(s.peaks[0]) && allFinite(s.peaks[1])
+}
+
+func allFinite(list []float64) bool {
+	for _, v := range list {
+		if !(math.Abs(v) <= math.MaxFloat64) {
+			return false
 		}
 	}
 	return true
