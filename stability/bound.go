@@ -1,6 +1,10 @@
 package stability
 
-import "math"
+import (
+	"math"
+
+	"example.org/overturn/stability/internal/pencil"
+)
 
 // A bound limits from below every driving number at which a disturbance of
 // wavenumber k can be neutral, stationary or not. Multiply the momentum equation
@@ -15,6 +19,7 @@ import "math"
 type bound struct {
 	// stiffness coefficients: a(w,w) ≥ (a₀ + a₂k² + a₄k⁴) ∫w²
 	a0, a2, a4 float64
+	softness   *softness
 	viscosity  float64 // smallest
 	gradient   float64 // largest |f|
 	thermal    float64 // λ
@@ -120,7 +125,11 @@ func firstEigenvalue(b, c float64) float64 {
 // growth rate σ ≥ 0, relative to the stiffness.
 func (b *bound) terms(k, sigma float64) [3]float64 {
 	k2 := k * k
-	stiffness := b.a0 + k2*(b.a2+k2*b.a4) + sigma*b.inertia*(math.Pi*math.Pi+k2)
+	stiffness := b.a0 + k2*(b.a2+k2*b.a4)
+	if b.softness != nil {
+		stiffness = max(stiffness, b.softness.at(k))
+	}
+	stiffness += sigma * b.inertia * (math.Pi*math.Pi + k2)
 	heat := b.gradient / (sigma + k2 + b.thermal)
 	t := [3]float64{
 		ThermalRayleigh: k2 * heat / stiffness,
@@ -130,6 +139,42 @@ func (b *bound) terms(k, sigma float64) [3]float64 {
 	surface := math.Sqrt(heat*heat + heat*b.gradient/k)
 	t[MarangoniNumber] = k2 * surface / math.Sqrt(math.Sqrt2*k*b.viscosity*stiffness)
 	return t
+}
+
+// softness is the smallest eigenvalue of the dissipation, relative to ∫w², of a
+// layer of variable viscosity. It knows that the weakest part of the layer is
+// thin, which the smallest viscosity alone does not tell.
+type softness struct {
+	level *level
+	known map[float64]float64 // by wavenumber
+}
+
+// softShare of the eigenvalue is a safe bound: the discrete one is a little too
+// large.
+const softShare = 0.9
+
+// soften prepares the eigenvalue problem a(w,w) = λ ∫w².
+func (b *bound) soften(l *Layer, base *baseState, eta *viscosityState) {
+	s := newSystem(1, false)
+	viscosity := s.coefficient(eta.at)
+	if l.Porous == Darcy {
+		s.darcy(l, viscosity, false)
+	} else {
+		s.stokes(&Layer{Bottom: l.Bottom, Top: l.Top}, viscosity)
+	}
+	s.add(integral{pencil.Mass, 0, s.velocity, s.velocity, 0}, 0, 0, -1)
+	s.nodes = layerNodes(l, base, eta)
+	s.operator.Excess += (eta.degree() + 1) / 2
+	b.softness = &softness{newLevel(s, s.nodes, coarseDegrees[0]), map[float64]float64{}}
+}
+
+func (s *softness) at(k float64) float64 {
+	v, ok := s.known[k]
+	if !ok {
+		v = softShare * s.level.work.SlowestDecay(k)
+		s.known[k] = v
+	}
+	return v
 }
 
 // driven adds up the terms of all numbers but one, n, or of all if n < 0. What

@@ -136,7 +136,7 @@ func (r reference) pick(t *testing.T, o Onset) float64 {
 		return o.Frequency
 	case "R2":
 		return o.Curvature / 2
-	case "theta_over_w":
+	case "theta_over_w at z=1/2":
 		return o.Mode.Temperature(0.5) / o.Mode.Velocity(0.5)
 	}
 	t.Fatalf("%s: unknown quantity", r.id)
@@ -481,7 +481,7 @@ func sectionJ(t *testing.T, r reference) float64 {
 		var err error
 		s.RadiusRatio, err = strconv.ParseFloat(m[1], 64)
 		require.NoError(t, err)
-		s.Inner, s.Outer = walls[r.has("inner no-slip")], walls[r.has("outer no-slip")]
+		s.Inner, s.Outer = walls[r.id[3] == 'R'], walls[r.id[4] == 'R']
 	}
 	if r.quantity == "l_c" {
 		o, err := s.Critical()

@@ -199,7 +199,7 @@ func (s *search) nothingBeyond(at sample, best float64, rising bool) bool {
 
 // centre returns the wavenumber with the smallest bound.
 func (s *search) centre() float64 {
-	const start, step = 3, 1.05
+	const start, step = 3, 1.3
 	at, least := float64(start), math.Inf(1)
 	for k := leastWavenumber; k < largestWavenumber; k *= step {
 		if b := s.lower(k); !math.IsInf(b, -1) && b < least {

@@ -74,12 +74,15 @@ func NewSolver(l Layer, settings *Settings) (*Solver, error) {
 		return nil, err
 	}
 	s.bound = newBound(&l, s.base, eta)
+	if eta.resolved != nil && !eta.resolved.Constant() {
+		s.bound.soften(&l, s.base, eta)
+	}
 	scale := s.unknownScale()
 	still := layerSystem(&l, s.base, eta, true, scale)
 	moving := layerSystem(&l, s.base, eta, false, scale)
 	s.engine = engine{
 		still: &ladder{system: still}, moving: &ladder{system: moving},
-		bound:     &s.bound,
+		bound: &s.bound, diffuses: true,
 		tolerance: set.Tolerance, maxUnknowns: set.MaxUnknowns,
 	}
 	s.engine.bottomless = still.unlimited && s.base.resolved.FromRight().At(0) > 0

@@ -204,3 +204,38 @@ func (w *Workspace) SolveLinear(pt Point, b []float64) ([]float64, error) {
 	w.p.Unscale(x)
 	return x, nil
 }
+
+// SlowestDecay returns the smallest λ > 0 with (A - λ(-M)) x = 0 at wavenumber k,
+// for a positive definite A and a negative definite M, or 0 if A is singular. It
+// is good to a few digits, and not below the true one.
+func (w *Workspace) SlowestDecay(k float64) float64 {
+	const (
+		digits        = 1e-4
+		maxIterations = 100
+	)
+	w.eigen.where = w.eigen.where[:0]
+	pt := Point{K: k}
+	if w.invert(&pt) != nil {
+		return 0
+	}
+	w.prepare(false)
+	w.startBorder() // c is the first guess
+	var mass [parts]complex128
+	mass[Mass] = -1
+	n, last := w.p.n, 0.0
+	lu := blas64.General{Rows: n, Cols: n, Stride: n, Data: w.eigen.matrix}
+	for range maxIterations {
+		w.apply(w.x, w.c, mass, k, 0)
+		before := floats.Dot(w.x[:n], w.c[:n])
+		copy(w.y[:n], w.x[:n])
+		lapack64.Getrs(blas.NoTrans, lu, blas64.General{Rows: n, Cols: 1, Stride: 1, Data: w.y[:n]}, w.eigen.pivot)
+		lambda := before / floats.Dot(w.x[:n], w.y[:n])
+		copy(w.c, w.y)
+		w.normalise(w.c)
+		if math.Abs(lambda-last) < digits*lambda {
+			return lambda
+		}
+		last = lambda
+	}
+	return last
+}
