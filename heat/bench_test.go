@@ -83,6 +83,26 @@ func BenchmarkStepVarying(b *testing.B) {
 	}
 }
 
+// BenchmarkStepAdaptive changes the length of each step, so that the implicit
+// scheme has to factor anew.
+func BenchmarkStepAdaptive(b *testing.B) {
+	for _, varying := range []string{"none", "conductivity", "capacity"} {
+		b.Run("varying="+varying, func(b *testing.B) {
+			const n = 1024
+			st, temperature, flow := benchmarkProblem(b, n, varying, Settings{Scheme: Implicit, Workers: 1})
+			dt := 0.9 * st.StableStep(flow)
+			ctx := context.Background()
+			for b.Loop() {
+				dt *= 0.999
+				if _, err := st.Step(ctx, temperature, flow, dt); err != nil {
+					b.Fatal(err)
+				}
+			}
+			b.ReportMetric(float64(b.Elapsed().Nanoseconds())/float64(b.N*n*n), "ns/cell")
+		})
+	}
+}
+
 func benchmarkStep(b *testing.B, n int, varying string, s Settings) {
 	st, temperature, flow := benchmarkProblem(b, n, varying, s)
 	dt := 0.9 * st.StableStep(flow)

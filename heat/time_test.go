@@ -160,6 +160,34 @@ func TestNoWaveGrowsAtStableStep(t *testing.T) {
 	}
 }
 
+// Conduction never grows in an implicit step, however long, and what is stiff in
+// one direction only is damped away.
+func TestImplicitIsStableForConduction(t *testing.T) {
+	for _, ax := range []float64{0, 0.1, 1, 3, 10, 1e2, 1e4, 1e8} {
+		for _, az := range []float64{0, 0.1, 1, 3, 10, 1e2, 1e4, 1e8} {
+			r := real(amplification(Implicit, ax, az, 0))
+			require.LessOrEqual(t, math.Abs(r), 1.0)
+			if ax+az == 1e8 {
+				require.Less(t, math.Abs(r), 1e-7)
+			}
+		}
+	}
+}
+
+// A single mode shrinks by the factor of the analysis: the solver is the method.
+func TestImplicitModeShrinksAsAnalysed(t *testing.T) {
+	const n, dt = 16, 0.05
+	g := uniform(t, n, n, 1, 1)
+	st, err := NewStepper(Equation{Grid: g}, &Settings{Scheme: Implicit})
+	require.NoError(t, err)
+	temperature := staggered.NewScalar(g)
+	temperature.Fill(func(x, z float64) float64 { return math.Cos(2*math.Pi*x) * math.Cos(3*math.Pi*z) })
+	before := temperature.Values[5]
+	integrate(t, st, temperature, nil, dt, 1)
+	ax, az := 4*dt*n*n*sin2(math.Pi/n), 4*dt*n*n*sin2(1.5*math.Pi/n)
+	require.InDelta(t, real(amplification(Implicit, ax, az, 0)), temperature.Values[5]/before, 1e-12)
+}
+
 func sin2(x float64) float64 { return math.Sin(x) * math.Sin(x) }
 
 // The bound is not idle: where conduction alone sets it, noise explodes a

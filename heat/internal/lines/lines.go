@@ -1,26 +1,25 @@
 package lines
 
-// Row returns the coefficients that the matrix has in the row of place j of one
-// line: before·x[j−1] + here·x[j] + after·x[j+1]. On a ring the place before
-// the first is the last one.
-type Row func(line, j int) (before, here, after float64)
-
-// System holds the factors of tridiagonal matrices of size n, one for all
-// lines or one for each.
+// System holds tridiagonal matrices A of size n, one for all lines or one for
+// each, and the factors of 1 + f·A.
 type System struct {
 	n, lines int
 	shared   bool
-	ring     bool
-	low      []float64 // multiplier of the place before
-	inv      []float64 // inverse of the pivot
-	up       []float64 // multiplier of the place after
-	q        []float64 // on a ring: solution for its corner column
-	corner   []float64 // and how x[n−1] and the sum enter: two numbers a matrix
-	rows     bool      // memory order: lines are contiguous
+	rows     bool // lines are contiguous in memory
+	closed   bool // the ends of a line are neighbours
+	ring     bool // they are, and that makes a difference
+
+	before, here, after []float64 // A
+
+	low    []float64 // multiplier of the place before
+	inv    []float64 // inverse of the pivot
+	up     []float64 // multiplier of the place after
+	q      []float64 // on a ring: the solution for its corner column
+	corner []float64 // and two numbers a matrix, see close
 }
 
-// NewRows returns room for the systems along the rows of nx×nz cells. shared
-// is their number of matrices: one for all, or one for each.
+// NewRows returns room for the systems along the rows of nx×nz cells; ring closes
+// each row.
 func NewRows(nx, nz int, sharing Sharing, ring bool) *System {
 	return newSystem(nx, nz, sharing, ring, true)
 }
@@ -41,13 +40,23 @@ const (
 )
 
 func newSystem(n, lines int, sharing Sharing, ring, rows bool) *System {
-	s := &System{n: n, lines: lines, shared: sharing == Shared, ring: ring && n > 2, rows: rows}
+	s := &System{n: n, lines: lines, shared: sharing == Shared, rows: rows, closed: ring, ring: ring && n > 2}
 	matrices := s.matrices()
-	s.low, s.inv, s.up = make([]float64, n*matrices), make([]float64, n*matrices), make([]float64, n*matrices)
+	for _, v := range [...]*[]float64{&s.before, &s.here, &s.after, &s.low, &s.inv, &s.up} {
+		*v = make([]float64, n*matrices)
+	}
 	if s.ring {
 		s.q, s.corner = make([]float64, n*matrices), make([]float64, 2*matrices)
 	}
 	return s
+}
+
+// Sharing says whether the lines share their matrix.
+func (s *System) Sharing() Sharing {
+	if s.shared {
+		return Shared
+	}
+	return Each
 }
 
 func (s *System) matrices() int {
@@ -64,65 +73,6 @@ func (s *System) place(matrix, j int) int {
 		return matrix*s.n + j
 	}
 	return j*s.lines + matrix
-}
-
-// Factor computes the factors of all matrices. closed says whether the first
-// and last place are neighbours.
-func (s *System) Factor(row Row, closed bool) {
-	for m := range s.matrices() {
-		s.factor(m, row, closed)
-	}
-}
-
-func (s *System) factor(m int, row Row, closed bool) {
-	n := s.n
-	before := func(j int) (b, h, a float64) {
-		b, h, a = row(m, j)
-		switch {
-		case !closed:
-		case n == 1: // its own neighbour
-			return 0, b + h + a, 0
-		case n == 2: // neighbours on both sides
-			if j == 0 {
-				return 0, h, a + b
-			}
-			return a + b, h, 0
-		}
-		return b, h, a
-	}
-	first, pivot0, _ := before(0)
-	_, _, last := before(n - 1)
-	if s.ring {
-		// Sherman & Morrison (1950): a rank-one change makes it tridiagonal.
-		s.corner[2*m] = first / -pivot0
-	}
-	for j := range n {
-		b, h, a := before(j)
-		if s.ring {
-			if j == 0 {
-				h += pivot0
-			}
-			if j == n-1 {
-				h += first * last / pivot0
-			}
-		}
-		at := s.place(m, j)
-		if j > 0 {
-			h -= b * s.up[s.place(m, j-1)]
-			s.low[at] = b
-		}
-		s.inv[at] = 1 / h
-		if j < n-1 {
-			s.up[at] = a / h
-		}
-	}
-	if s.ring {
-		q := s.q[m*n : (m+1)*n]
-		clear(q)
-		q[0], q[n-1] = -pivot0, last
-		s.thomas(q, m)
-		s.corner[2*m+1] = 1 / (1 + q[0] + s.corner[2*m]*q[n-1])
-	}
 }
 
 // thomas solves one contiguous line.
