@@ -24,7 +24,6 @@ type Solver struct {
 	settings Settings
 	motion   wallMotion
 
-	team  *team.Team
 	mg    *multigrid.Solver
 	level *multigrid.Level // the finest of mg
 
@@ -56,10 +55,9 @@ func NewSolver(g *staggered.Grid, walls Walls, s *Settings) (*Solver, error) {
 		return nil, err
 	}
 	sv.motion.balance(g)
-	sv.team = team.New(settings.Workers)
 	sv.mg = multigrid.NewSolver(
 		multigrid.NewAxis(g.DX(), walls.Left.end(), walls.Right.end()),
-		multigrid.NewAxis(g.DZ(), walls.Bottom.end(), walls.Top.end()), sv.team)
+		multigrid.NewAxis(g.DZ(), walls.Bottom.end(), walls.Top.end()), team.New(settings.Workers))
 	sv.level = sv.mg.Finest()
 	sv.load = newLoad(sv.level)
 	sv.history = make([]float64, 0, settings.MaxIterations+1)
@@ -103,8 +101,6 @@ func (sv *Solver) SolveWithSource(ctx context.Context, flow *staggered.Flow, vis
 	if err := sv.load.set(sv, force, source); err != nil {
 		return Report{}, err
 	}
-	sv.team.Start()
-	defer sv.team.Stop()
 	if !sv.fresh {
 		sv.mg.Refresh()
 		sv.fresh = true

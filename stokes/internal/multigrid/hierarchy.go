@@ -101,41 +101,66 @@ func (h *Hierarchy) Precondition(z, r Fields) {
 	h.cycle(0)
 }
 
-// cycle improves nothing into something: an F-cycle from zero on level k.
+// cycle is an F-cycle from zero on level k.
 func (h *Hierarchy) cycle(k int) {
-	l := h.Levels[k]
 	if k == len(h.Levels)-1 {
 		h.bottom.solve()
 		return
 	}
-	l.u.clear()
-	h.smooth(k)
-	h.run(k, l.passes.restrict)
+	p := &h.Levels[k].passes
+	h.down(k, p.freshDown, p.fresh)
 	h.cycle(k + 1)
 	if h.branch[k+1] {
-		h.vCycle(k + 1)
+		h.improve(k + 1)
 	}
-	h.run(k, l.passes.prolong)
-	h.smooth(k)
+	h.up(k)
 }
 
-// vCycle improves the correction on level k.
-func (h *Hierarchy) vCycle(k int) {
-	l := h.Levels[k]
+// improve is a V-cycle on level k that starts from what is there.
+func (h *Hierarchy) improve(k int) {
+	p := &h.Levels[k].passes
+	h.down(k, p.down, p.sweep)
+	h.descend(k + 1)
+	h.up(k)
+}
+
+// descend is a V-cycle from zero on level k.
+func (h *Hierarchy) descend(k int) {
 	if k == len(h.Levels)-1 {
 		h.bottom.solve()
 		return
 	}
-	h.smooth(k)
-	h.run(k, l.passes.restrict)
-	h.Levels[k+1].u.clear()
-	h.vCycle(k + 1)
-	h.run(k, l.passes.prolong)
-	h.smooth(k)
+	p := &h.Levels[k].passes
+	h.down(k, p.freshDown, p.fresh)
+	h.descend(k + 1)
+	h.up(k)
 }
 
-func (h *Hierarchy) smooth(k int) {
+// down smooths level k and gives its residual to the next: in one go, or
+// taken apart by the relaxation of jumps.
+func (h *Hierarchy) down(k int, all, smooth *pipeline) {
 	l := h.Levels[k]
+	if len(l.jumps) == 0 {
+		all.run()
+		return
+	}
+	if smooth == l.passes.fresh {
+		l.u.clear()
+	}
+	l.relaxJumps(jumpsSweeps)
+	l.passes.sweep.run()
+	l.relaxJumps(jumpsSweeps)
+	l.passes.restrict.run()
+}
+
+// up takes the correction from the level below level k and smooths.
+func (h *Hierarchy) up(k int) {
+	l := h.Levels[k]
+	if len(l.jumps) == 0 {
+		l.passes.up.run()
+		return
+	}
+	l.passes.prolong.run()
 	l.relaxJumps(jumpsSweeps)
 	l.passes.sweep.run()
 	l.relaxJumps(jumpsSweeps)

@@ -7,10 +7,14 @@ type scratch struct {
 	sxx        []float64
 	rx, rz, rp []float64
 	cx, cz, cp []float64
+
+	carry []float64 // restricted z-residuals of the faces inside the last coarse row
+	at    int       // fine row that follows it
+	of    *Level
 }
 
 func newScratch(stride int) *scratch {
-	all := make([]float64, 11*stride)
+	all := make([]float64, 12*stride)
 	next := func() []float64 {
 		row := all[:stride:stride]
 		all = all[stride:]
@@ -19,11 +23,13 @@ func newScratch(stride int) *scratch {
 	return &scratch{
 		tau: next(), tauUp: next(), szz: next(), szzUp: next(), sxx: next(),
 		rx: next(), rz: next(), rp: next(), cx: next(), cz: next(), cp: next(),
+		carry: next(),
 	}
 }
 
 // begin prepares s for operatorRow from row j upwards.
 func (l *Level) begin(s *scratch, u Fields, j int) {
+	s.of = nil
 	l.shearRow(s.tauUp, u, j)
 	if j > 1 {
 		l.normalRow(s.szzUp, u, j-1)

@@ -5,7 +5,7 @@ import "example.org/overturn/stokes/internal/team"
 // A stage is a pass over the rows 1..rows of a level, one row at a time. It may
 // work on row j as soon as the stage before it has finished the rows around.
 type stage struct {
-	row func(j int)
+	row func(member, j int)
 
 	// lag is by how many rows the stage follows the first one when rows are
 	// taken from the bottom up; lead is by how many rows above a border it
@@ -30,11 +30,20 @@ type pipeline struct {
 	border func(member int)
 }
 
+// shifted returns the stages as they have to follow others.
+func shifted(stages []stage, rows int) []stage {
+	var s []stage
+	for _, st := range stages {
+		s = append(s, stage{st.row, st.lag + rows, st.lead + rows})
+	}
+	return s
+}
+
 // leastBlock is the smallest number of rows worth a goroutine. It exceeds the
 // sum of the largest lag and lead, which keeps borders apart.
-const leastBlock = 24
+const leastBlock = 28
 
-func newPipeline(rows int, t *team.Team, blocks int, stages ...stage) *pipeline {
+func newPipeline(rows int, t *team.Team, blocks int, stages []stage) *pipeline {
 	p := &pipeline{stages: stages, rows: rows, team: t, blocks: max(1, min(blocks, rows/leastBlock))}
 	p.block, p.border = p.runBlock, p.runBorder
 	return p
@@ -70,7 +79,7 @@ func (p *pipeline) runBlock(member int) {
 				from += st.lead
 			}
 			if j := t - st.lag; j >= from && j < hi {
-				st.row(j)
+				st.row(member, j)
 			}
 		}
 	}
@@ -86,7 +95,7 @@ func (p *pipeline) runBorder(member int) {
 	for s := range p.stages {
 		st := &p.stages[s]
 		for j := border - st.lag; j < border+st.lead; j++ {
-			st.row(j)
+			st.row(member, j)
 		}
 	}
 }

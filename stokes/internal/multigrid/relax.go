@@ -8,11 +8,24 @@ package multigrid
 // Corrections vanish on walls. There ix and iz are zero, so the passes need
 // not know about walls at all.
 
+// startX is the first half of relaxX when all unknowns are zero, whatever the
+// arrays hold: it clears row j and makes the red equations exact.
+func (l *Level) startX(j int) {
+	v := l.row(l.u.X, j)
+	clear(v)
+	clear(l.row(l.u.Z, j))
+	clear(l.row(l.u.P, j))
+	n := len(v)
+	f, ix := l.row(l.f.X, j)[:n], l.row(l.ix, j)[:n]
+	first := l.X.firstFree()
+	for i := first + (first+j)&1; i < n-1; i += 2 {
+		v[i] = f[i] * ix[i]
+	}
+	l.wrapX(v)
+}
+
 // relaxX makes one colour of the x-momentum equations of row j exact.
 func (l *Level) relaxX(j, colour int) {
-	if j > l.Z.N {
-		return
-	}
 	v, down, up := l.row(l.u.X, j), l.row(l.u.X, j-1), l.row(l.u.X, j+1)
 	n := len(v)
 	down, up = down[:n], up[:n]
@@ -35,7 +48,7 @@ func (l *Level) relaxX(j, colour int) {
 
 // relaxZ makes one colour of the z-momentum equations of row j exact.
 func (l *Level) relaxZ(j, colour int) {
-	if j == 1 || j > l.Z.N {
+	if j == 1 {
 		return
 	}
 	v, down, up := l.row(l.u.Z, j), l.row(l.u.Z, j-1), l.row(l.u.Z, j+1)
@@ -61,9 +74,6 @@ func (l *Level) relaxZ(j, colour int) {
 // defect, this is the pressure part of the distribution: the change of the
 // defect says by how much.
 func (l *Level) pressBefore(j int) {
-	if j > l.Z.N {
-		return
-	}
 	x, p := l.row(l.u.X, j), l.row(l.u.P, j)
 	n := len(x)
 	p = p[:n]
@@ -80,9 +90,6 @@ func (l *Level) pressBefore(j int) {
 // pressAfter finishes what pressBefore began, for the red cells of row j; the
 // black ones, corrected last, have no defect left.
 func (l *Level) pressAfter(j int) {
-	if j > l.Z.N {
-		return
-	}
 	x, p := l.row(l.u.X, j), l.row(l.u.P, j)
 	n := len(x)
 	p = p[:n]
@@ -100,9 +107,6 @@ func (l *Level) pressAfter(j int) {
 // distribute removes the mass defect of one colour of the cells of row j by
 // changing the velocities of their faces, most where the fluid is weakest.
 func (l *Level) distribute(j, colour int) {
-	if j > l.Z.N {
-		return
-	}
 	x := l.row(l.u.X, j)
 	n := len(x)
 	low, high := l.row(l.u.Z, j)[:n], l.row(l.u.Z, j+1)[:n]

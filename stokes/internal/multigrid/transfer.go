@@ -1,46 +1,53 @@
 package multigrid
 
-// restrict computes the residual of the correction equation of l and stores
-// its restriction, the transpose of linear interpolation along each component and of
-// constants across it, as the right-hand side of c, for coarse rows
-// lo ≤ J < hi of 1..nz. Fine residuals are never stored.
-func (l *Level) restrict(c *Level, s *scratch, lo, hi int) {
+// restrict computes the residual of the correction equation of l in the rows
+// of coarse cell row J and stores its restriction as the right-hand side of
+// that row of c: the transpose of linear interpolation along each component
+// and of constants across it. Fine residuals are never stored.
+//
+// Faces inside the row below reach up to the lower faces of J. If s did not
+// come from that row, they are computed again.
+func (l *Level) restrict(c *Level, s *scratch, J int) {
 	mz := l.mz
-	for J := lo; J < hi; J++ {
-		clear(c.row(c.f.X, J))
-		clear(c.row(c.f.P, J))
+	fx, fz, g := c.row(c.f.X, J), c.row(c.f.Z, J), c.row(c.f.P, J)
+	clear(fx)
+	clear(g)
+	first := mz.node[J]
+	if s.at != first || s.of != l || J == 1 {
+		clear(s.carry)
+		if J > 1 {
+			first = mz.node[J-1] + 1
+		}
+		l.begin(s, l.u, first)
 	}
-	clear(c.row(c.f.Z, lo))
-	first := mz.node[lo]
-	if lo > 1 {
-		first = mz.node[lo-1] + 1 // faces inside the cell below reach up
-	}
-	l.begin(s, l.u, first)
-	for j := first; j < mz.node[hi]; j++ {
+	copy(fz, s.carry)
+	for j := first; j < mz.node[J+1]; j++ {
 		l.operatorRow(s, l.u, j)
 		l.addLoad(s, j)
-		J := mz.cell[j]
-		if J >= lo {
-			l.mx.gatherFaces(c.row(c.f.X, J), s.rx)
-			l.mx.gatherCells(c.row(c.f.P, J), s.rp, 1)
-		}
 		w := mz.nodeW[j]
-		if J >= lo {
-			l.mx.gatherCells(c.row(c.f.Z, J), s.rz, 1-w)
+		if j < mz.node[J] {
+			l.mx.gatherCells(fz, s.rz, w)
+			continue
 		}
-		if J+1 < hi {
-			if j == mz.node[J] {
-				clear(c.row(c.f.Z, J+1))
-			}
-			if w > 0 {
-				l.mx.gatherCells(c.row(c.f.Z, J+1), s.rz, w)
-			}
+		l.mx.gatherFaces(fx, s.rx)
+		l.mx.gatherCells(g, s.rp, 1)
+		l.mx.gatherCells(fz, s.rz, 1-w)
+		if j == mz.node[J] {
+			clear(s.carry)
+		} else {
+			l.mx.gatherCells(s.carry, s.rz, w)
 		}
 	}
-	for J := lo; J < hi; J++ {
-		c.wrapX(c.row(c.f.X, J))
-		c.wrapX(c.row(c.f.Z, J))
-		c.wrapX(c.row(c.f.P, J))
+	s.at, s.of = mz.node[J+1], l
+	c.wrapX(fx)
+	c.wrapX(fz)
+	c.wrapX(g)
+}
+
+// restrictAfter restricts the coarse row of which j is the uppermost fine row.
+func (l *Level) restrictAfter(c *Level, s *scratch, j int) {
+	if J := l.mz.cell[j]; l.mz.cell[j+1] != J {
+		l.restrict(c, s, J)
 	}
 }
 

@@ -2,8 +2,9 @@
 //
 // One cycle of a multigrid solver on 256 by 256 cells is some hundred passes
 // of a few microseconds each. Waking a goroutine for each of them would cost
-// more than it gains, so the members of a [Team] spin for a while before they
-// sleep.
+// more than it gains, so the members of a [Team] look out for work for a while
+// before they sleep. And as the cores may be busy with other programs, nobody
+// waits for a member that has not begun: the caller does its share as well.
 package team
 
 import (
@@ -11,141 +12,145 @@ import (
 	"sync/atomic"
 )
 
-// A Team is a number of goroutines that work on the same task at the same
-// time. The goroutine that calls [Team.Run] is member 0. A team serves one
-// caller at a time.
+// A Team is a number of goroutines that share out the parts of one task after
+// the other. They start with the first task and sleep when there is none; they
+// end when the Team is garbage. A team serves one caller at a time.
 type Team struct {
-	members []*member
-
-	task    func(member int)
-	round   atomic.Uint32
-	pending atomic.Int32
+	*work
 	started bool
 }
 
+// work is what members know, which must not include the Team: as long as
+// they refer to it, it is not garbage.
+type work struct {
+	size    int
+	task    func(part int)
+	ticket  atomic.Uint64 // round in the upper bits, next part in the lower
+	done    atomic.Int32  // parts finished in this round
+	quit    atomic.Bool
+	members []member
+}
+
 type member struct {
-	number int
-	seen   uint32
 	asleep atomic.Bool
 	wake   chan struct{}
-	body   func() // the goroutine, kept so that starting it allocates nothing
-	_      [64]byte
+	_      [64]byte // members look at their own cache line
 }
 
-// How long a member without work stays awake: first looking at the round
-// counter all the time, then giving way to other goroutines between looks.
+const partBits = 16
+
+// How long a member without work stays awake: first looking at the ticket all
+// the time, then giving way to other goroutines between looks.
 const (
-	looks  = 3000
-	yields = 200
+	looks  = 2000
+	yields = 100
 )
 
-// New returns a team of the given number of members, at least one.
-func New(members int) *Team {
-	t := &Team{}
-	for i := 1; i < members; i++ {
-		m := &member{number: i, wake: make(chan struct{}, 1)}
-		m.body = func() { t.serve(m) }
-		t.members = append(t.members, m)
+// New returns a team of the given size, at least one, the caller of Run
+// included.
+func New(size int) *Team {
+	w := &work{size: min(max(1, size), 1<<partBits-1)}
+	w.members = make([]member, w.size-1)
+	for i := range w.members {
+		w.members[i].wake = make(chan struct{}, 1)
 	}
-	return t
+	w.ticket.Store(uint64(w.size)) // nothing to do
+	return &Team{work: w}
 }
 
-// Size returns the number of members, the caller of Run included.
-func (t *Team) Size() int { return len(t.members) + 1 }
+// Size returns the number of members.
+func (t *Team) Size() int { return t.size }
 
-// Start starts the goroutines. Between Start and Stop, Run is concurrent;
-// outside it does all the work itself.
-func (t *Team) Start() {
-	if t.started {
+// Run calls task once for each part 0 to Size-1, on as many goroutines as are
+// free, and returns when all calls have. Parts must not depend on each other.
+func (t *Team) Run(task func(part int)) {
+	if t.size == 1 {
+		task(0)
 		return
 	}
-	t.started = true
-	for _, m := range t.members {
-		m.seen = t.round.Load()
-		go m.body()
-	}
-}
-
-// Stop ends the goroutines and waits until they have left their last task.
-func (t *Team) Stop() {
 	if !t.started {
-		return
+		t.start()
 	}
-	t.call(nil)
-	t.started = false
-}
-
-// Run calls task once for each member, with the member's number, and returns
-// when all calls have. The task must not depend on the order.
-func (t *Team) Run(task func(member int)) {
-	if !t.started {
-		for i := range t.Size() {
-			task(i)
-		}
-		return
-	}
-	t.call(task)
-}
-
-// call gives the task to all members; a nil task ends them.
-func (t *Team) call(task func(member int)) {
-	t.task = task
-	t.pending.Store(int32(len(t.members)))
-	t.round.Add(1)
-	for _, m := range t.members {
-		if m.asleep.CompareAndSwap(true, false) {
+	w := t.work
+	w.task = task
+	w.done.Store(0)
+	round := w.ticket.Load()>>partBits + 1
+	w.ticket.Store(round << partBits)
+	for i := range w.members {
+		if m := &w.members[i]; m.asleep.CompareAndSwap(true, false) {
 			m.wake <- struct{}{}
 		}
 	}
-	if task != nil {
-		task(0)
+	for w.part() {
 	}
-	for look := 0; t.pending.Load() != 0; look++ {
+	for look := 0; w.done.Load() != int32(w.size); look++ {
 		if look > looks {
 			runtime.Gosched()
 		}
 	}
 }
 
-func (t *Team) serve(m *member) {
-	for {
-		t.await(m)
-		m.seen++
-		task := t.task
-		if task != nil {
-			task(m.number)
+func (t *Team) start() {
+	t.started = true
+	for i := range t.members {
+		go t.work.serve(&t.members[i])
+	}
+	runtime.AddCleanup(t, func(w *work) {
+		w.quit.Store(true)
+		for i := range w.members {
+			close(w.members[i].wake)
 		}
-		t.pending.Add(-1)
-		if task == nil {
-			return
+	}, t.work)
+}
+
+// part does the next part of the present task, or reports that none is left.
+func (w *work) part() bool {
+	for {
+		v := w.ticket.Load()
+		next := int(v & (1<<partBits - 1))
+		if next >= w.size {
+			return false
+		}
+		// The round is part of the ticket, so that this fails when the part
+		// belongs to a task that is over.
+		if w.ticket.CompareAndSwap(v, v+1) {
+			w.task(next)
+			w.done.Add(1)
+			return true
 		}
 	}
 }
 
-// await returns when the round counter has moved on.
-func (t *Team) await(m *member) {
-	for look := 0; t.round.Load() == m.seen; look++ {
+func (w *work) serve(m *member) {
+	for look := 0; !w.quit.Load(); look++ {
 		switch {
+		case w.part():
+			look = 0
 		case look < looks:
 		case look < looks+yields:
 			runtime.Gosched()
 		default:
 			m.asleep.Store(true)
-			// The caller may have started a round between the test and the
-			// store: then it either sees the flag and sends, or it does not
-			// and the flag is taken back here.
-			if t.round.Load() != m.seen && m.asleep.CompareAndSwap(true, false) {
-				return
+			// A task may have come between the look and the store: then its
+			// caller either saw the flag and sends, or did not and the flag is
+			// taken back here.
+			if w.waiting() && m.asleep.CompareAndSwap(true, false) {
+				break
 			}
 			<-m.wake
-			return
+			look = 0
 		}
 	}
 }
 
+// waiting reports whether a part has not been taken.
+func (w *work) waiting() bool {
+	return int(w.ticket.Load()&(1<<partBits-1)) < w.size
+}
+
 // Block returns the part of n items, numbered from 0, that belongs to one of
-// size members: from lo up to but not including hi. Parts differ by at most
-// one item.
-func Block(n, member, size int) (lo, hi int) {
-	return n * member / size, n * (member + 1) / size
+// size parts: from lo up to but not including hi. Parts differ by at most one
+// item.
+func Block(n, part, size int) (lo, hi int) {
+	return n * part / size, n * (part + 1) / size
 }

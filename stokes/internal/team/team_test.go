@@ -1,52 +1,70 @@
 package team_test
 
 import (
+	"runtime"
 	"sync/atomic"
 	"testing"
 	"time"
 
 	"example.org/overturn/stokes/internal/team"
+	"github.com/stretchr/testify/require"
 )
 
-func TestEveryMemberWorksOnceARound(t *testing.T) {
+func TestEveryPartIsDoneOnce(t *testing.T) {
 	for _, size := range []int{1, 2, 3, 5} {
 		tm := team.New(size)
+		require.Equal(t, size, tm.Size())
 		calls := make([]atomic.Int32, size)
-		count := func(member int) { calls[member].Add(1) }
-		tm.Run(count) // not started: all by the caller
-		tm.Start()
-		for round := range 100 {
-			if round == 50 {
-				time.Sleep(5 * time.Millisecond) // let them fall asleep
+		count := func(part int) { calls[part].Add(1) }
+		for round := range 300 {
+			if round%100 == 50 {
+				time.Sleep(2 * time.Millisecond) // let them fall asleep
 			}
 			tm.Run(count)
-			for m := range calls {
-				if got := calls[m].Load(); got != int32(round+2) {
-					t.Fatalf("size %d, round %d: member %d was called %d times", size, round, m, got)
+			for p := range calls {
+				if got := calls[p].Load(); got != int32(round+1) {
+					t.Fatalf("size %d, round %d: part %d was done %d times", size, round, p, got)
 				}
 			}
 		}
-		tm.Stop()
-		tm.Start() // can be used again
-		tm.Run(count)
-		tm.Stop()
-		for m := range calls {
-			if got := calls[m].Load(); got != 102 {
-				t.Errorf("size %d: member %d was called %d times after a restart", size, m, got)
-			}
+	}
+}
+
+func TestPartsRunAtTheSameTime(t *testing.T) {
+	// Each part waits for the other.
+	tm := team.New(2)
+	var here [2]chan struct{}
+	for i := range here {
+		here[i] = make(chan struct{}, 1)
+	}
+	for range 20 {
+		tm.Run(func(part int) {
+			here[part] <- struct{}{}
+			<-here[1-part]
+		})
+	}
+}
+
+func TestMembersEndWithTheirTeam(t *testing.T) {
+	before := runtime.NumGoroutine()
+	team.New(4).Run(func(int) {})
+	for range 100 {
+		runtime.GC()
+		time.Sleep(5 * time.Millisecond)
+		if runtime.NumGoroutine() <= before {
+			return
 		}
 	}
+	t.Errorf("%d goroutines after the team was dropped, %d before it was made", runtime.NumGoroutine(), before)
 }
 
 func TestRoundsDoNotAllocate(t *testing.T) {
 	tm := team.New(2)
 	task := func(int) {}
 	allocs := testing.AllocsPerRun(20, func() {
-		tm.Start()
 		for range 10 {
 			tm.Run(task)
 		}
-		tm.Stop()
 	})
 	if allocs != 0 {
 		t.Errorf("%v allocations a round", allocs)
@@ -73,8 +91,6 @@ func TestBlocksCoverAllItemsOnce(t *testing.T) {
 
 func BenchmarkRound(b *testing.B) {
 	tm := team.New(2)
-	tm.Start()
-	defer tm.Stop()
 	task := func(int) {}
 	for b.Loop() {
 		tm.Run(task)

@@ -1,0 +1,80 @@
+package multigrid
+
+import (
+	"fmt"
+	"testing"
+)
+
+// Kernels per cell. A work unit is one residual of the finest level.
+func BenchmarkKernels(b *testing.B) {
+	for _, n := range []int{256, 1024} {
+		p := newProblem(square(n), exponential(1e6))
+		sv := p.sv
+		l := sv.Finest()
+		sv.X.clear()
+		sv.Residual(p)
+		sv.Precondition(sv.z[0], sv.r)
+		zero := noLoad{}
+		s := newScratch(l.stride)
+		for _, k := range []struct {
+			name string
+			run  func()
+		}{
+			{"residual", func() { sv.Residual(zero) }},
+			{"operator", func() {
+				l.begin(s, sv.z[0], 1)
+				for j := 1; j <= n; j++ {
+					l.operatorRow(s, sv.z[0], j)
+				}
+			}},
+			{"relaxX", func() {
+				for c := range 2 {
+					for j := 1; j <= n; j++ {
+						l.relaxX(j, c)
+					}
+				}
+			}},
+			{"relaxZ", func() {
+				for c := range 2 {
+					for j := 1; j <= n; j++ {
+						l.relaxZ(j, c)
+					}
+				}
+			}},
+			{"press", func() {
+				for j := 1; j <= n; j++ {
+					l.pressBefore(j)
+					l.pressAfter(j)
+				}
+			}},
+			{"distribute", func() {
+				for c := range 2 {
+					for j := 1; j <= n; j++ {
+						l.distribute(j, c)
+					}
+				}
+			}},
+			{"sweep", func() { l.passes.sweep.run() }},
+			{"restrict", func() { l.passes.restrict.run() }},
+			{"prolong", func() { l.passes.prolong.run() }},
+			{"freshDown", func() { l.passes.freshDown.run() }},
+			{"up", func() { l.passes.up.run() }},
+			{"cycle", func() { sv.Precondition(sv.z[0], sv.r) }},
+			{"apply2", func() { sv.k = 2; sv.run(0, sv.applyPass) }},
+			{"update2", func() { sv.k = 2; sv.run(0, sv.updatePass) }},
+			{"refresh", func() { sv.Refresh() }},
+			{"jumps", func() { l.findJumps() }},
+		} {
+			b.Run(fmt.Sprintf("%s/cells=%dx%d", k.name, n, n), func(b *testing.B) {
+				for b.Loop() {
+					k.run()
+				}
+				b.ReportMetric(float64(b.Elapsed().Nanoseconds())/float64(b.N*n*n), "ns/cell")
+			})
+		}
+	}
+}
+
+type noLoad struct{}
+
+func (noLoad) AddRow(int, []float64, []float64, []float64) {}
