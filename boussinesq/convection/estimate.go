@@ -51,11 +51,12 @@ const safety = 3
 //
 // With three grids or more, and an observed order within 0.5 of 2, the terms in
 // h² and h⁴ are removed by the finest three, and the uncertainty is the change
-// against removing h² alone by the finest two. With two grids only h² is
-// removed and the uncertainty is the whole step from the finest value. Where
-// the order is off, nothing is removed and the uncertainty is three times the
-// step that Richardson extrapolation of order min(order, 2) would make, or
-// three times the range of the last values where they do not converge at all.
+// against removing by the finest two h² alone, or a term of the observed order,
+// whichever is larger. With two grids only h² is removed and the uncertainty is
+// the whole step from the finest value. Where the order is off, nothing is
+// removed and the uncertainty is three times the step that Richardson
+// extrapolation of order min(order, 2) would make, or three times the range of
+// the last values where they do not converge at all.
 func Extrapolate(h, values []float64) (Estimate, error) {
 	if err := checkSequence(h, values); err != nil {
 		return Estimate{}, err
@@ -78,6 +79,10 @@ func Extrapolate(h, values []float64) (Estimate, error) {
 		ratio := (h[0] / h[2]) * (h[0] / h[2])
 		e.Value = fine + (fine-coarse)/(ratio-1)
 		e.Uncertainty = math.Abs(e.Value - fine)
+		if !math.IsNaN(e.Order) {
+			asObserved := richardson(h[1], h[2], values[1], values[2], e.Order)
+			e.Uncertainty = max(e.Uncertainty, math.Abs(e.Value-asObserved))
+		}
 	case math.IsNaN(e.Order):
 		e.Value = finest
 		e.Uncertainty = safety * (max(values[0], values[1], values[2]) - min(values[0], values[1], values[2]))

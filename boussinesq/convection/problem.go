@@ -84,6 +84,11 @@ func (p Problem) withDefaults() (Problem, error) {
 			return p, fmt.Errorf("convection: Problem.%s is %v, want %s", f.name, f.value, f.want)
 		}
 	}
+	if p.Viscosity != nil {
+		if err := rheology.Check(p.Viscosity); err != nil {
+			return p, fmt.Errorf("convection: Problem.Viscosity: %w", err)
+		}
+	}
 	if p.Walls.Left.IsPeriodic() != p.Thermal.Left.IsPeriodic() {
 		return p, errors.New("convection: the sides are periodic for the flow or for the temperature only, want both or neither")
 	}

@@ -253,6 +253,7 @@ func approach(ctx context.Context, p Problem, s SteadySettings, t *staggered.Sca
 	inner.Tolerance = approachTolerance
 	kernels := s.kernels(&inner)
 	kernels.Courant = 0.9
+	kernels.Heat.Scheme = heat.Implicit
 	m, err := New(p, &kernels)
 	if err != nil {
 		return err

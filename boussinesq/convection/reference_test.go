@@ -1,0 +1,147 @@
+package convection_test
+
+import (
+	"context"
+	"encoding/csv"
+	"math"
+	"os"
+	"strconv"
+	"testing"
+
+	"github.com/stretchr/testify/assert"
+	"github.com/stretchr/testify/require"
+
+	"example.org/overturn/boussinesq/convection"
+	"example.org/overturn/heat"
+	"example.org/overturn/stokes"
+	"example.org/overturn/stokes/rheology"
+	"example.org/overturn/stokes/staggered"
+)
+
+// quantities are the names of testdata/steady.csv for our diagnostics.
+var quantities = map[string]string{
+	"Nu_top": "NuTop", "Nu_bot": "NuBottom", "vrms": "RMSVelocity", "vsurf_rms": "SurfaceVelocity", "Tmean": "MeanTemperature",
+	"q1": "CornerGradient1", "q2": "CornerGradient2", "q3": "CornerGradient3", "q4": "CornerGradient4",
+}
+
+// references reads testdata/steady.csv: case, quantity, value.
+func references(t *testing.T) map[string]map[string]float64 {
+	t.Helper()
+	file, err := os.Open("testdata/steady.csv")
+	require.NoError(t, err)
+	defer file.Close()
+	r := csv.NewReader(file)
+	r.Comment = '#'
+	rows, err := r.ReadAll()
+	require.NoError(t, err)
+	table := map[string]map[string]float64{}
+	for _, row := range rows[1:] {
+		v, err := strconv.ParseFloat(row[2], 64)
+		require.NoError(t, err)
+		if table[row[0]] == nil {
+			table[row[0]] = map[string]float64{}
+		}
+		name, known := quantities[row[1]]
+		require.True(t, known, row[1])
+		table[row[0]][name] = v
+	}
+	return table
+}
+
+// A steadyCase is one problem of testdata/steady.csv.
+type steadyCase struct {
+	name     string
+	width    float64
+	rayleigh float64
+	problem  convection.Problem // but for grid and Rayleigh number
+	slow     bool               // not among the quick ones
+}
+
+func steadyCases() []steadyCase {
+	flux := heat.Walls{Bottom: heat.Flux(1), Top: heat.Isothermal(0)}
+	heated := heat.Walls{Top: heat.Isothermal(0)}
+	contrast := func(c float64) rheology.Law { return rheology.FrankKamenetskii{ThermalExponent: math.Log(c)} }
+	deep := rheology.FrankKamenetskii{DepthExponent: math.Log(30)}
+	rigid := stokes.Walls{Bottom: stokes.NoSlip, Top: stokes.NoSlip}
+	// A start of the wanted number of rolls where the default is another.
+	half := func(waves float64) func(x, z float64) float64 {
+		return func(x, z float64) float64 { return 1 - z + 0.05*math.Cos(waves*math.Pi*x)*math.Sin(math.Pi*z) }
+	}
+	return []steadyCase{
+		{name: "1a", width: 1, rayleigh: 1e4},
+		{name: "1b", width: 1, rayleigh: 1e5},
+		{name: "1c", width: 1, rayleigh: 1e6, slow: true},
+		{name: "2a", width: 1, rayleigh: 1e4, problem: convection.Problem{Viscosity: contrast(1000)}, slow: true},
+		{name: "n01", width: 1.5, rayleigh: 3e4, problem: convection.Problem{Initial: half(1 / 1.5)}, slow: true},
+		{name: "n03", width: 1, rayleigh: 5e3, slow: true},
+		{name: "n04", width: 1, rayleigh: 2e4, problem: convection.Problem{Walls: rigid}},
+		{name: "n06", width: 1, rayleigh: 5e4, problem: convection.Problem{Heating: 5}},
+		{name: "n08", width: 1, rayleigh: 2e4, problem: convection.Problem{Viscosity: contrast(50)}, slow: true},
+		{name: "n10", width: 1, rayleigh: 100, problem: convection.Problem{Viscosity: contrast(1e5)}, slow: true},
+		{name: "n12", width: 1, rayleigh: 1e5, problem: convection.Problem{Viscosity: deep}},
+		{name: "n14", width: 2, rayleigh: 2e4, problem: convection.Problem{Initial: half(1)}, slow: true},
+		{name: "n16", width: math.Sqrt2, rayleigh: 700, slow: true},
+		{name: "n18", width: math.Sqrt2, rayleigh: 1000},
+		{name: "n19", width: 1, rayleigh: 2e4, problem: convection.Problem{Thermal: &flux}},
+		{name: "n25", width: 1, rayleigh: 2e4, problem: convection.Problem{Thermal: &heated, Heating: 1}},
+	}
+}
+
+// on returns the problem on a grid refined towards all walls.
+func (c steadyCase) on(t testing.TB, rows int) convection.Problem {
+	t.Helper()
+	columns := int(math.Round(float64(rows)*c.width/8)) * 8
+	g, err := staggered.Graded(columns, rows, c.width, 1, staggered.Grading{Left: 8, Right: 8, Bottom: 8, Top: 8})
+	require.NoError(t, err)
+	p := c.problem
+	p.Grid, p.Rayleigh = g, c.rayleigh
+	return p
+}
+
+// Every steady reference state, extrapolated from three grids: Nusselt number
+// and speed to a bound, every other quantity within twice the uncertainty that
+// the study itself states.
+func TestSteadyStatesAgreeWithReferences(t *testing.T) {
+	table := references(t)
+	for _, c := range steadyCases() {
+		t.Run(c.name, func(t *testing.T) {
+			if c.slow && testing.Short() {
+				t.Skip("slow")
+			}
+			study, err := convection.Refine(context.Background(), c.on(t, 96), 3, nil)
+			require.NoError(t, err)
+			require.NotEmpty(t, table[c.name])
+			for name, want := range table[c.name] {
+				e, ok := study.Get(name)
+				require.True(t, ok, name)
+				assert.InDelta(t, want, e.Value, 2*e.Uncertainty+1e-6*math.Abs(want), "%s: %v", name, e)
+				if name == "NuTop" || name == "RMSVelocity" {
+					assert.InEpsilon(t, want, e.Value, 3e-4, "%s: %v", name, e)
+					assert.InDelta(t, 2, e.Order, 0.35, name)
+				}
+			}
+		})
+	}
+}
+
+// The four cases of the published benchmark on the grids of examples/verify.
+func TestBenchmarkCasesToManyDigits(t *testing.T) {
+	if os.Getenv("OVERTURN_LONG") == "" {
+		t.Skip("set OVERTURN_LONG=1 for 192x192 cells")
+	}
+	table := references(t)
+	bounds := map[string]float64{"1a": 1e-6, "1b": 3e-6, "1c": 3e-5, "2a": 1e-5}
+	for _, c := range steadyCases() {
+		bound, ok := bounds[c.name]
+		if !ok {
+			continue
+		}
+		study, err := convection.Refine(context.Background(), c.on(t, 192), 3, nil)
+		require.NoError(t, err)
+		for _, name := range []string{"NuTop", "RMSVelocity"} {
+			e, _ := study.Get(name)
+			assert.InEpsilon(t, table[c.name][name], e.Value, bound, "%s %s: %v", c.name, name, e)
+			assert.InDelta(t, 2, e.Order, 0.1, "%s %s", c.name, name)
+		}
+	}
+}

@@ -1,0 +1,106 @@
+package convection
+
+import (
+	"context"
+	"fmt"
+	"math"
+	"strings"
+
+	"example.org/overturn/stokes/staggered"
+)
+
+// A Study holds a steady state on a sequence of grids and what it says about
+// the limit of no cell size.
+type Study struct {
+	// Solutions from the coarsest to the finest grid.
+	Solutions []*Solution
+
+	// Estimates of the diagnostics, under the names and in the order of
+	// [Diagnostics.All].
+	Estimates []NamedEstimate
+}
+
+// A NamedEstimate is the estimate of one diagnostic.
+type NamedEstimate struct {
+	Name string
+	Estimate
+}
+
+// Get returns the estimate of a name of [Diagnostics.All], and whether there is
+// one.
+func (s *Study) Get(name string) (Estimate, bool) {
+	for _, e := range s.Estimates {
+		if e.Name == name {
+			return e.Estimate, true
+		}
+	}
+	return Estimate{}, false
+}
+
+// String lists the estimates, one a line.
+func (s *Study) String() string {
+	var b strings.Builder
+	for _, e := range s.Estimates {
+		fmt.Fprintf(&b, "%-16s %v\n", e.Name, e.Estimate)
+	}
+	return b.String()
+}
+
+// Refine finds the steady state of p on so many grids, at least two: that of p
+// and those of every second, fourth, ... of its nodes, and estimates each
+// diagnostic with its numerical uncertainty by [Extrapolate]. The number of
+// cells of p.Grid must be divisible by two in both directions each time.
+//
+// The estimate is of the error of the discretisation only; the error of the
+// solve is of the order of SteadySettings.Tolerance.
+func Refine(ctx context.Context, p Problem, grids int, s *SteadySettings) (*Study, error) {
+	if grids < 2 {
+		return nil, fmt.Errorf("convection: a study of %d grids, want at least 2", grids)
+	}
+	c, err := s.withDefaults()
+	if err != nil {
+		return nil, err
+	}
+	if p, err = p.withDefaults(); err != nil {
+		return nil, err
+	}
+	nx, nz := p.Grid.Cells()
+	if factor := 1 << (grids - 1); nx%factor != 0 || nz%factor != 0 {
+		return nil, fmt.Errorf("convection: a study of %d grids cannot halve %dx%d cells so often, want multiples of %d", grids, nx, nz, factor)
+	}
+	solutions, err := steadySequence(ctx, p, c, grids)
+	if err != nil {
+		return &Study{Solutions: solutions}, err
+	}
+	study := &Study{Solutions: solutions[len(solutions)-grids:]}
+	return study, study.estimate()
+}
+
+// estimate extrapolates each diagnostic.
+func (s *Study) estimate() error {
+	sizes := make([]float64, len(s.Solutions))
+	values := map[string][]float64{}
+	var names []string
+	for i, sol := range s.Solutions {
+		sizes[i] = cellSize(sol.Temperature.Grid)
+		for name, v := range sol.All() {
+			if i == 0 {
+				names = append(names, name)
+			}
+			values[name] = append(values[name], v)
+		}
+	}
+	for _, name := range names {
+		e, err := Extrapolate(sizes, values[name])
+		if err != nil {
+			return fmt.Errorf("%s: %w", name, err)
+		}
+		s.Estimates = append(s.Estimates, NamedEstimate{Name: name, Estimate: e})
+	}
+	return nil
+}
+
+// cellSize returns the root of the mean area of a cell.
+func cellSize(g *staggered.Grid) float64 {
+	return math.Sqrt(g.Area() / float64(g.NX()*g.NZ()))
+}
