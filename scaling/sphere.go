@@ -14,6 +14,10 @@ type Body struct {
 	DensityContrast units.Density          // of the body less that of the fluid; negative for a body that rises
 	Gravity         units.Acceleration     // g
 	Viscosity       units.DynamicViscosity // of the fluid
+
+	// Density of the fluid, for the Reynolds number. Zero: inertia is taken to
+	// be negligible, unchecked.
+	Density units.Density
 }
 
 func (b Body) check() error {
@@ -21,6 +25,7 @@ func (b Body) check() error {
 		check.Finite(pkg, "Body.DensityContrast", b.DensityContrast),
 		check.Positive(pkg, "Body.Gravity", b.Gravity),
 		check.Positive(pkg, "Body.Viscosity", b.Viscosity),
+		check.NotNegative(pkg, "Body.Density", b.Density),
 	)
 }
 
@@ -32,9 +37,9 @@ func (b Body) weight() float64 {
 // Sphere returns the speed at which a rigid sphere of radius a sinks through an
 // unbounded fluid, 2Δρ g a²/(9μ) (Stokes 1851). A body that rises has a negative
 // speed. Inertia is neglected: [ErrOutOfRange] comes with the value where the
-// Reynolds number ρ U 2a/μ exceeds one tenth; density is that of the fluid.
-func (b Body) Sphere(a units.Length, density units.Density) (units.Velocity, error) {
-	return b.sphere(a, density, 2./9)
+// Reynolds number 2ρUa/μ exceeds one tenth.
+func (b Body) Sphere(a units.Length) (units.Velocity, error) {
+	return b.sphere(a, 2./9)
 }
 
 // Drop returns the speed at which a spherical drop of another viscosity sinks,
@@ -43,16 +48,16 @@ func (b Body) Sphere(a units.Length, density units.Density) (units.Velocity, err
 //
 // (Hadamard 1911, Rybczynski 1911): 2/9 of Δρ g a²/μ for a stiff drop, 1/3 for an
 // inviscid one. Range as in [Body.Sphere].
-func (b Body) Drop(a units.Length, inside units.DynamicViscosity, density units.Density) (units.Velocity, error) {
+func (b Body) Drop(a units.Length, inside units.DynamicViscosity) (units.Velocity, error) {
 	if err := check.First(b.check(), check.NotNegative(pkg, "viscosity inside", inside)); err != nil {
 		return 0, err
 	}
 	ratio := float64(inside) / float64(b.Viscosity)
-	return b.sphere(a, density, 2./3*(1+ratio)/(2+3*ratio))
+	return b.sphere(a, 2./3*(1+ratio)/(2+3*ratio))
 }
 
-func (b Body) sphere(a units.Length, density units.Density, factor float64) (units.Velocity, error) {
-	err := check.First(b.check(), check.Positive(pkg, "radius", a), check.Positive(pkg, "density", density))
+func (b Body) sphere(a units.Length, factor float64) (units.Velocity, error) {
+	err := check.First(b.check(), check.Positive(pkg, "radius", a))
 	if err != nil {
 		return 0, err
 	}
@@ -60,7 +65,7 @@ func (b Body) sphere(a units.Length, density units.Density, factor float64) (uni
 	if err != nil {
 		return 0, err
 	}
-	re := 2 * float64(density) * math.Abs(float64(u)) * float64(a) / float64(b.Viscosity)
+	re := 2 * float64(b.Density) * math.Abs(float64(u)) * float64(a) / float64(b.Viscosity)
 	if re > maxReynolds {
 		return u, fmt.Errorf("scaling: sphere: Reynolds number is %.2g, want <= %g: %w", re, maxReynolds, ErrOutOfRange)
 	}
