@@ -21,7 +21,8 @@ import (
 // the momentum residual, |r|² = Σ (rx² + rz²)/V, can be far larger where the
 // viscosity varies by orders of magnitude.
 type Report struct {
-	Iterations int
+	Method     Method    // Multigrid or Transform
+	Iterations int       // cycles, or direct solutions
 	Residuals  []float64 // weighted, before the first and after each iteration; valid until the next Solve
 	Residual   float64   // weighted, recomputed from the answer
 	Momentum   float64   // plain norm of momentum, recomputed from the answer
@@ -31,8 +32,8 @@ type Report struct {
 
 // String summarises the report in one line.
 func (r Report) String() string {
-	return fmt.Sprintf("%d iterations, residual %.1e (momentum alone %.1e), %v",
-		r.Iterations, r.Residual, r.Momentum, r.Elapsed.Round(time.Microsecond))
+	return fmt.Sprintf("%v: %d iterations, residual %.1e (momentum alone %.1e), %v",
+		r.Method, r.Iterations, r.Residual, r.Momentum, r.Elapsed.Round(time.Microsecond))
 }
 
 // ErrNotConverged reports that Solve stopped short of the tolerance. The

@@ -17,6 +17,9 @@ type Settings struct {
 	// [DefaultMaxIterations].
 	MaxIterations int
 
+	// Method is how to solve. Default [Automatic]: the fastest that applies.
+	Method Method
+
 	// MaxBasis bounds the search directions that are kept when convergence is
 	// slow, each of which takes 48 bytes a cell. Default [DefaultMaxBasis].
 	MaxBasis int
@@ -96,6 +99,9 @@ func (s *Settings) withDefaults() (Settings, error) {
 		if *f.value < 0 {
 			return c, fmt.Errorf("stokes: %s is %d, want at least 1", f.name, *f.value)
 		}
+	}
+	if c.Method < Automatic || c.Method > Transform {
+		return c, fmt.Errorf("stokes: Method is %v, want Automatic, Multigrid or Transform", c.Method)
 	}
 	if c.CornerMean < Geometric || c.CornerMean > Harmonic {
 		return c, fmt.Errorf("stokes: CornerMean is %v, want Geometric, Arithmetic or Harmonic", c.CornerMean)

@@ -7,6 +7,7 @@ import (
 	"math"
 	"time"
 
+	"example.org/overturn/stokes/internal/layered"
 	"example.org/overturn/stokes/internal/multigrid"
 	"example.org/overturn/stokes/internal/team"
 	"example.org/overturn/stokes/staggered"
@@ -30,6 +31,11 @@ type Solver struct {
 	scale float64 // a power of two that brings viscosities near one
 	known bool    // the finest level holds a viscosity
 	fresh bool    // and the coarser ones follow it
+
+	direct   *layered.Solver // nil until it is needed
+	suits    bool            // the grid and the sides allow direct solution
+	layered  bool            // the viscosity does too
+	factored bool            // direct holds the factors of this viscosity
 
 	load    load
 	history []float64
@@ -59,6 +65,7 @@ func NewSolver(g *staggered.Grid, walls Walls, s *Settings) (*Solver, error) {
 		multigrid.NewAxis(g.DX(), walls.Left.end(), walls.Right.end()),
 		multigrid.NewAxis(g.DZ(), walls.Bottom.end(), walls.Top.end()), team.New(settings.Workers))
 	sv.level = sv.mg.Finest()
+	sv.suits = layered.Suits(sv.level)
 	sv.load = newLoad(sv.level)
 	sv.history = make([]float64, 0, settings.MaxIterations+1)
 	sv.watch = sv.record
@@ -101,10 +108,6 @@ func (sv *Solver) SolveWithSource(ctx context.Context, flow *staggered.Flow, vis
 	if err := sv.load.set(sv, force, source); err != nil {
 		return Report{}, err
 	}
-	if !sv.fresh {
-		sv.mg.Refresh()
-		sv.fresh = true
-	}
 	r, err := sv.iterate(ctx, flow)
 	r.Elapsed = time.Since(start)
 	return r, err
@@ -116,22 +119,30 @@ func (sv *Solver) iterate(ctx context.Context, flow *staggered.Flow) (Report, er
 	rest := sv.mg.Residual(&sv.load)
 	sv.unit = rest.Weighted
 	sv.history = sv.history[:0]
+	method, err := sv.choose()
+	if err != nil {
+		return Report{}, err
+	}
 	if rest.Weighted == 0 || rest.Momentum <= sv.load.noise() && !sv.motion.any() && sv.load.source == nil {
 		// In balance at rest, or out of it by no more than rounding.
 		sv.store(flow)
-		return Report{}, ctx.Err()
+		return Report{Method: method}, ctx.Err()
 	}
-	sv.guess(flow)
-	if start := sv.mg.Residual(&sv.load); !(start.Weighted < rest.Weighted) {
-		sv.rest()
+	target := sv.settings.Tolerance * rest.Weighted
+	var norms multigrid.Norms
+	n := 0
+	if method == Transform {
+		if norms, n, err = sv.transform(ctx, rest, target); err != nil {
+			return Report{}, err
+		}
+	} else {
+		norms = sv.start(flow, rest)
 	}
-	norms, n, err := sv.mg.Solve(ctx, &sv.load, multigrid.Limits{
-		Target:     sv.settings.Tolerance * rest.Weighted,
-		Iterations: sv.settings.MaxIterations,
-		Basis:      sv.settings.MaxBasis,
-		Watch:      sv.watch,
-	})
+	if sv.settings.Method != Transform && norms.Weighted > target {
+		norms, n, err = sv.cycle(ctx, n, target)
+	}
 	r := Report{
+		Method:     method,
 		Iterations: n,
 		Residuals:  sv.history,
 		Residual:   norms.Weighted / rest.Weighted,
@@ -143,6 +154,34 @@ func (sv *Solver) iterate(ctx context.Context, flow *staggered.Flow) (Report, er
 		err = &ConvergenceError{Iterations: n, Residual: r.Residual, Tolerance: sv.settings.Tolerance}
 	}
 	return r, err
+}
+
+// start takes the flow as the start guess unless the fluid at rest is a
+// better one.
+func (sv *Solver) start(flow *staggered.Flow, rest multigrid.Norms) multigrid.Norms {
+	sv.guess(flow)
+	norms := sv.mg.Residual(&sv.load)
+	if !(norms.Weighted < rest.Weighted) {
+		sv.rest()
+		norms = rest
+	}
+	return norms
+}
+
+// cycle iterates with multigrid cycles, after a number of iterations of
+// another kind.
+func (sv *Solver) cycle(ctx context.Context, done int, target float64) (multigrid.Norms, int, error) {
+	if !sv.fresh {
+		sv.mg.Refresh()
+		sv.fresh = true
+	}
+	norms, n, err := sv.mg.Solve(ctx, &sv.load, multigrid.Limits{
+		Target:     target,
+		Iterations: sv.settings.MaxIterations - done,
+		Basis:      sv.settings.MaxBasis,
+		Watch:      sv.watch,
+	})
+	return norms, done + n, err
 }
 
 func (sv *Solver) record(iteration int, residual float64) {

@@ -501,3 +501,44 @@ func TestDefaults(t *testing.T) {
 	require.Equal(t, a.Iterations, b.Iterations)
 	require.Equal(t, "geometric, arithmetic, harmonic", fmt.Sprintf("%v, %v, %v", stokes.Geometric, stokes.Arithmetic, stokes.Harmonic))
 }
+
+func TestTransformAgreesWithMultigrid(t *testing.T) {
+	for _, w := range []stokes.Walls{
+		{},
+		{Bottom: stokes.NoSlip},
+		{Bottom: stokes.NoSlip, Top: stokes.NoSlip.Moving(func(x float64) float64 { return math.Sin(pi * x) })},
+	} {
+		g, err := staggered.Graded(36, 53, 1, 1, staggered.Grading{Bottom: 3})
+		require.NoError(t, err)
+		_, force := plume(g, 1)
+		eta := staggered.NewScalar(g)
+		eta.Fill(func(_, z float64) float64 { return math.Exp(5 * math.Sin(4*z)) })
+		tight := stokes.Settings{Tolerance: 1e-11, Method: stokes.Transform}
+		a, ra := solve(t, g, w, eta, force, &tight)
+		tight.Method = stokes.Multigrid
+		b, rb := solve(t, g, w, eta, force, &tight)
+		t.Log(ra, rb)
+		v, p := difference(a, b)
+		require.Less(t, v, 1e-9*b.RMS())
+		require.Less(t, p, 1e-9*b.Pressure().RMS())
+	}
+}
+
+func TestMethodIsChosen(t *testing.T) {
+	g, prime := uniform(t, 32, 24, 1, 1), uniform(t, 37, 24, 1, 1)
+	eta, force := plume(g, 10)
+	_, r := solve(t, g, stokes.Walls{}, nil, force, nil)
+	require.Equal(t, stokes.Transform, r.Method)
+	_, r = solve(t, g, stokes.Walls{}, eta, force, nil)
+	require.Equal(t, stokes.Multigrid, r.Method)
+	_, r = solve(t, g, stokes.Walls{Left: stokes.NoSlip}, nil, force, nil)
+	require.Equal(t, stokes.Multigrid, r.Method)
+	_, force = plume(prime, 1)
+	_, r = solve(t, prime, stokes.Walls{}, nil, force, nil)
+	require.Equal(t, stokes.Multigrid, r.Method)
+	sv, err := stokes.NewSolver(g, stokes.Walls{}, &stokes.Settings{Method: stokes.Transform})
+	require.NoError(t, err)
+	_, err = sv.Solve(context.Background(), staggered.NewFlow(g), eta, nil)
+	require.ErrorContains(t, err, "stokes: Method is transform, which does not apply: the viscosity varies along x")
+	require.Equal(t, "automatic, multigrid, transform", fmt.Sprintf("%v, %v, %v", stokes.Automatic, stokes.Multigrid, stokes.Transform))
+}

@@ -22,13 +22,28 @@ func (sv *Solver) setViscosity(viscosity *staggered.Scalar) error {
 		sv.scale = scale
 		return nil
 	}
-	sv.scale, sv.known, sv.fresh = scale, true, false
+	sv.scale, sv.known, sv.fresh, sv.factored = scale, true, false, false
+	sv.layered = sv.isLayered()
 	sv.level.WrapViscosity()
 	for j := 1; j <= sv.grid.NZ()+1; j++ {
 		sv.setCorners(j)
 	}
-	sv.level.CutCorners()
+	sv.mg.RefreshFinest()
 	return nil
+}
+
+// isLayered reports whether the viscosity does not vary along x.
+func (sv *Solver) isLayered() bool {
+	nx, nz := sv.grid.Cells()
+	for j := 1; j <= nz; j++ {
+		row := sv.level.Row(sv.level.Eta, j)[1:][:nx]
+		for _, v := range row {
+			if v != row[0] {
+				return false
+			}
+		}
+	}
+	return true
 }
 
 // storeViscosity copies the viscosity and reports whether it is the old one.

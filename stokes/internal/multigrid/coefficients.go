@@ -2,10 +2,8 @@ package multigrid
 
 import "math"
 
-// CutCorners takes over l.Corner, but for walls without shear stress.
-func (l *Level) CutCorners() { l.cutCorners(1, l.Z.N+2) }
-
-// cutCorners does so for rows lo ≤ j < hi of 1..nz+1.
+// cutCorners takes over l.Corner, but for walls without shear stress, for rows
+// lo ≤ j < hi of 1..nz+1.
 func (l *Level) cutCorners(lo, hi int) {
 	n, top := l.X.N, l.Z.N+1
 	for j := lo; j < hi; j++ {

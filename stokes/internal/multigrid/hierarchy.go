@@ -83,6 +83,17 @@ func (h *Hierarchy) Refresh() {
 	h.bottom.factor()
 }
 
+// RefreshFinest rebuilds what [Solver.Residual] needs and no more.
+func (h *Hierarchy) RefreshFinest() {
+	l := h.Finest()
+	l.WrapViscosity()
+	h.run(0, l.passes.refresh[0])
+	h.run(0, l.passes.refresh[1])
+}
+
+// Team returns the goroutines that the hierarchy works with.
+func (h *Hierarchy) Team() *team.Team { return h.team }
+
 // run does one pass on level k.
 func (h *Hierarchy) run(k int, pass func(member int)) {
 	if h.blocks[k] == 1 {

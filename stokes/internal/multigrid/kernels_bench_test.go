@@ -13,7 +13,8 @@ func BenchmarkKernels(b *testing.B) {
 		l := sv.Finest()
 		sv.X.clear()
 		sv.Residual(p)
-		sv.Precondition(sv.z[0], sv.r)
+		sv.grow(5)
+		sv.Precondition(sv.z[0], sv.R)
 		zero := noLoad{}
 		s := newScratch(l.stride)
 		for _, k := range []struct {
@@ -59,7 +60,7 @@ func BenchmarkKernels(b *testing.B) {
 			{"prolong", func() { l.passes.prolong.run() }},
 			{"freshDown", func() { l.passes.freshDown.run() }},
 			{"up", func() { l.passes.up.run() }},
-			{"cycle", func() { sv.Precondition(sv.z[0], sv.r) }},
+			{"cycle", func() { sv.Precondition(sv.z[0], sv.R) }},
 			{"apply2", func() { sv.k = 2; sv.run(0, sv.applyPass) }},
 			{"update2", func() { sv.k = 2; sv.run(0, sv.updatePass) }},
 			{"refresh", func() { sv.Refresh() }},

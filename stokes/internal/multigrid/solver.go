@@ -28,8 +28,8 @@ type Load interface {
 type Solver struct {
 	*Hierarchy
 	X Fields // start and answer; wall velocities are set by the caller
+	R Fields // the residual of X
 
-	r     Fields
 	z, q  []Fields  // directions and what the operator makes of them
 	beta  []float64 // row k: coefficients of q[k] before orthogonalisation
 	norm  []float64 // |q[k]|²
@@ -66,8 +66,8 @@ const (
 func NewSolver(x, z Axis, t *team.Team) *Solver {
 	sv := &Solver{Hierarchy: NewHierarchy(x, z, t)}
 	l := sv.Finest()
-	sv.X, sv.r = newFields(l.size()), newFields(l.size())
-	sv.grow(shortBasis)
+	sv.totals, sv.sums = make([]float64, 3), make([]float64, 3*(l.Z.N+1))
+	sv.X, sv.R = newFields(l.size()), newFields(l.size())
 	rows := func(work func(s *scratch, j int), begin func(s *scratch, j int)) func(int) {
 		return func(member int) {
 			blocks := sv.blocks[0]
@@ -143,6 +143,9 @@ func (sv *Solver) Residual(load Load) Norms {
 // norms of the true residual of the answer and the number of iterations made.
 // The error is that of the context.
 func (sv *Solver) Solve(ctx context.Context, load Load, lim Limits) (Norms, int, error) {
+	if len(sv.z) == 0 {
+		sv.grow(min(shortBasis, lim.Basis))
+	}
 	norms := sv.Residual(load)
 	if lim.Watch != nil {
 		lim.Watch(0, norms.Weighted)
@@ -200,7 +203,7 @@ func (sv *Solver) round(ctx context.Context, lim Limits, done int, start float64
 // or false when the direction adds nothing.
 func (sv *Solver) iterate() (float64, bool) {
 	k, m := sv.k, len(sv.z)
-	sv.Precondition(sv.z[k], sv.r)
+	sv.Precondition(sv.z[k], sv.R)
 	sv.run(0, sv.applyPass)
 	clear(sv.beta[k*m:][:k])
 	t := sv.total(k + 2)
@@ -292,7 +295,7 @@ func (sv *Solver) residualRow(s *scratch, j int) {
 	if j == 1 {
 		clear(s.rz)
 	}
-	rx, rz, rp := l.row(sv.r.X, j), l.row(sv.r.Z, j), l.row(sv.r.P, j)
+	rx, rz, rp := l.row(sv.R.X, j), l.row(sv.R.Z, j), l.row(sv.R.P, j)
 	copy(rx, s.rx)
 	copy(rz, s.rz)
 	copy(rp, s.rp)
@@ -341,7 +344,7 @@ func (sv *Solver) dotsRow(s *scratch, j int) {
 	for i := 0; i <= k; i++ {
 		sums[i] = l.dotRow(s, sv.q[i], j)
 	}
-	sums[k+1] = l.dotRow(s, sv.r, j)
+	sums[k+1] = l.dotRow(s, sv.R, j)
 }
 
 // dotRow is the inner product of row j of u with the weighted row in s.
@@ -371,7 +374,7 @@ func (sv *Solver) updateRow(_ *scratch, j int) {
 		addScaled(qz, b, l.row(sv.q[i].Z, j))
 		addScaled(qp, b, l.row(sv.q[i].P, j))
 	}
-	rx, rz, rp := l.row(sv.r.X, j), l.row(sv.r.Z, j), l.row(sv.r.P, j)
+	rx, rz, rp := l.row(sv.R.X, j), l.row(sv.R.Z, j), l.row(sv.R.P, j)
 	addScaled(rx, -sv.step, qx)
 	addScaled(rz, -sv.step, qz)
 	addScaled(rp, -sv.step, qp)
