@@ -260,3 +260,23 @@ func TestStrings(t *testing.T) {
 	ce := &ConvergenceError{Iterations: 3, Residual: 1e-3, Tolerance: 1e-8}
 	require.EqualError(t, ce, "heat: steady state not converged after 3 iterations: residual 1.0e-03, tolerance 1.0e-08")
 }
+
+// Fields on an equal grid made elsewhere fit, and so do bare arrays.
+func TestEqualGridsFit(t *testing.T) {
+	g, twin := uniform(t, 5, 4, 2, 1), uniform(t, 5, 4, 2, 1)
+	st, err := NewStepper(Equation{Grid: g, Source: staggered.NewScalar(twin)}, nil)
+	require.NoError(t, err)
+	ctx := context.Background()
+	for _, grid := range []*staggered.Grid{twin, nil} {
+		flow := staggered.NewFlow(twin)
+		flow.Grid = grid
+		temperature := &staggered.Scalar{Grid: grid, Values: make([]float64, 20)}
+		_, err = st.Step(ctx, temperature, flow, 1e-3)
+		require.NoError(t, err)
+	}
+	longer := uniform(t, 5, 4, 3, 1)
+	_, err = st.Step(ctx, staggered.NewScalar(longer), nil, 1e-3)
+	require.ErrorIs(t, err, ErrSize)
+	_, err = st.Step(ctx, staggered.NewScalar(g), staggered.NewFlow(longer), 1e-3)
+	require.ErrorIs(t, err, ErrSize)
+}

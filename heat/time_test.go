@@ -235,3 +235,78 @@ func TestStableStepHoldsOnGradedGrids(t *testing.T) {
 		require.Less(t, high.Value-low.Value, 10.0)
 	})
 }
+
+// The bounds as documented, in a uniform flow: Courant numbers and diffusion.
+func TestStableStepValues(t *testing.T) {
+	g := uniform(t, 10, 5, 1, 1)
+	flow := staggered.NewFlow(g)
+	flow.FillVelocity(func(x, z float64) float64 { return -3 }, func(x, z float64) float64 { return 2 })
+	k := staggered.NewScalar(g)
+	k.SetAll(0.5)
+	capacity := staggered.NewScalar(g)
+	capacity.SetAll(2)
+	const (
+		courant = 3*10 + 2*5.
+		kappa   = 0.25
+		own     = 2 * kappa * (100 + 25) // of a cell inside
+	)
+	for _, tt := range []struct {
+		s        Settings
+		flow     *staggered.Flow
+		want     float64
+		relative float64
+	}{
+		{Settings{Advection: Bounded}, flow, 1 / (2*courant + own), 1e-12},
+		{Settings{Advection: Bounded, Scheme: RungeKutta2}, flow, 1 / (2*courant + own), 1e-12},
+		{Settings{Advection: Bounded, Scheme: Implicit}, flow, 1 / (2 * courant), 1e-12},
+		{Settings{}, nil, 2.5 / (2 * own), 1e-12},
+		{Settings{Scheme: RungeKutta2}, nil, 2 / (2 * own), 1e-12},
+		{Settings{}, flow, 1 / math.Hypot(courant/1.73, 2*own/2.5), 1e-12},
+		{Settings{Scheme: Implicit}, flow, math.Min(1/courant, math.Cbrt(6*kappa/(courant*courant*13))), 1e-12},
+	} {
+		st, err := NewStepper(Equation{Grid: g, Conductivity: k, HeatCapacity: capacity, Walls: Walls{Left: Periodic, Right: Periodic}}, &tt.s)
+		require.NoError(t, err)
+		require.InEpsilon(t, tt.want, st.StableStep(tt.flow), tt.relative, "%v %v", tt.s.Scheme, tt.s.Advection)
+	}
+	// RungeKutta2: c² dt³ v²/κ + 3 s dt = 6.
+	st, err := NewStepper(Equation{Grid: g, Conductivity: k, HeatCapacity: capacity, Walls: Walls{Left: Periodic, Right: Periodic}}, &Settings{Scheme: RungeKutta2})
+	require.NoError(t, err)
+	dt := st.StableStep(flow)
+	require.InDelta(t, 6, courant*courant*dt*dt*dt*13/kappa+3*2*own*dt, 1e-9)
+	// Without conduction the two-stage scheme has no stable step.
+	st, err = NewStepper(Equation{Grid: g, Conductivity: frozen(g)}, &Settings{Scheme: RungeKutta2})
+	require.NoError(t, err)
+	require.Zero(t, st.StableStep(flow))
+}
+
+// Steps far beyond the explicit limit lead to the steady state also where
+// conductivity or capacity, or both, vary by orders of magnitude.
+func TestImplicitWithContrasts(t *testing.T) {
+	for _, varying := range []string{"conductivity", "capacity", "both"} {
+		g := uniform(t, 16, 14, 1, 1)
+		contrast := func(sign float64) *staggered.Scalar {
+			c := 3 * sign
+			if varying == "both" { // what is stiff in both directions settles slowly
+				c /= 2
+			}
+			s := staggered.NewScalar(g)
+			s.Fill(func(x, z float64) float64 { return math.Exp(c * (x + z)) })
+			return s
+		}
+		eq := Equation{Grid: g, Walls: Walls{Bottom: Isothermal(1), Top: Robin(1, 0)}}
+		if varying != "capacity" {
+			eq.Conductivity = contrast(1)
+		}
+		if varying != "conductivity" {
+			eq.HeatCapacity = contrast(-1)
+		}
+		st, err := NewStepper(eq, &Settings{Scheme: Implicit})
+		require.NoError(t, err)
+		steady, temperature := staggered.NewScalar(g), staggered.NewScalar(g)
+		_, err = st.Steady(context.Background(), steady, nil)
+		require.NoError(t, err)
+		integrate(t, st, temperature, nil, 10, 1000)
+		worst, _ := differences(steady.Values, temperature.Values)
+		require.Less(t, worst, 1e-6, varying)
+	}
+}
