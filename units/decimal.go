@@ -161,9 +161,6 @@ func fromScientific(s string) decimal {
 	d.exp, _ = strconv.Atoi(exp)
 	whole, fraction, _ := strings.Cut(mantissa, ".")
 	all := whole + fraction
-	if whole == "0" {
-		all = ""
-	}
 	d.digits = strings.TrimRight(all, "0")
 	d.exp += len(all) - len(d.digits) - len(fraction)
 	return d

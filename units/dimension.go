@@ -1,6 +1,7 @@
 package units
 
 import (
+	"fmt"
 	"math"
 	"strconv"
 	"strings"
@@ -95,18 +96,18 @@ func power(e float64) string {
 		return ""
 	}
 	if e == math.Trunc(e) {
-		return superscript(strconv.FormatFloat(e, 'f', -1, 64))
+		return superscript(strconv.Itoa(int(e)))
 	}
-	if hundredths := e * 100; math.Round(hundredths)/100 == e {
+	n, q := int(math.Round(e*exponentGrain)), exponentGrain
+	if n*100%q == 0 {
 		return "^" + strconv.FormatFloat(e, 'f', -1, 64)
 	}
-	n, q := math.Round(e*exponentGrain), float64(exponentGrain)
-	for _, f := range []float64{2, 2, 3, 5, 5} {
-		if math.Mod(n, f) == 0 && math.Mod(q, f) == 0 {
+	for _, f := range []int{2, 2, 3, 5, 5} { // whose product is exponentGrain
+		if n%f == 0 && q%f == 0 {
 			n, q = n/f, q/f
 		}
 	}
-	return "^(" + strconv.FormatFloat(n, 'f', -1, 64) + "/" + strconv.FormatFloat(q, 'f', -1, 64) + ")"
+	return fmt.Sprintf("^(%d/%d)", n, q)
 }
 
 func superscript(digits string) string {

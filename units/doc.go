@@ -38,11 +38,12 @@
 // error: a slash divides by what directly follows, and after it a product needs
 // parentheses. Symbols and the prefixes that each takes are a closed table:
 //
-//	all SI prefixes   m g s A K mol cd N Pa J W Hz C eV
-//	some prefixes     t yr a L l bar P St Gal D cal cal_th cal_IT rad
-//	no prefix         min h hr d day days year years degC degF degR (and with °)
-//	                  ft in lb psi Btu atm dyn erg darcy HFU HGU
-//	numbers           % wt% ‰ ppm ppb deg °
+//	all SI prefixes  m g s A K mol cd N Pa J W Hz C eV
+//	some prefixes    t yr a L l bar P St Gal D cal cal_th cal_IT rad
+//	no prefix        kg min h hr d day days year years kelvin darcy atm dyn erg HFU HGU
+//	                 degC °C ℃ Celsius degF °F ℉ Fahrenheit degR °R
+//	                 ft in lb psi Btu BTU Btu_IT
+//	                 % wt% ‰ ppm ppb deg °
 //
 // The prefix micro is u or either of the two code points of µ. A year (yr, a;
 // Myr and Ga likewise) is the Julian year of 31 557 600 s. The calorie (cal, and
@@ -57,7 +58,7 @@
 // once: "0.07 mm/yr" becomes the float64 nearest to it. String, and Format
 // without a number of digits, write as few digits as it takes for Parse to return
 // the same bits, for every finite value, negative zero and subnormal numbers
-// included. Only fractional powers of units that are no powers of ten (yr^0.5)
+// included (but -0 K is 0 K once it went through °C or °F). Only fractional powers of units that are no powers of ten (yr^0.5)
 // have the rounding of [math.Pow], and the degree of arc that of 19 digits of π.
 // The operators round as float64s do: 3 * units.Centimetre or v.In(u) may differ
 // from the nearest float64 in the last bit.

@@ -41,8 +41,8 @@ var definitions = []struct{ symbols, is, prefixes string }{
 	{"min", "60 s", ""},
 	{"h hr", "3600 s", ""},
 	{"d day days", "86400 s", ""},
-	{"yr year years", "31557600 s", "kMG"},
-	{"a", "31557600 s", "kMG"},
+	{"yr a", "31557600 s", "kMG"},
+	{"year years", "yr", ""},
 
 	// Temperature. These are intervals; zeros has the points.
 	{"degC °C ℃ Celsius", "K", ""},
@@ -54,7 +54,8 @@ var definitions = []struct{ symbols, is, prefixes string }{
 	{"L l", "1e-3 m^3", "µmcdhk"},
 	{"ft", "0.3048 m", ""},
 	{"in", "0.0254 m", ""},
-	{"D darcy", "1e-7 m^2/101325", "mµn"},
+	{"D", "1e-7 m^2/101325", "mµn"},
+	{"darcy", "D", ""},
 
 	// Pressure, force and mass.
 	{"bar", "1e5 Pa", "µmkM"},

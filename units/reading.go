@@ -6,89 +6,16 @@ import (
 	"strconv"
 )
 
-// value returns the float64 nearest to d units, and whether there is one: it
-// must be finite, and zero only if d is.
-func (u *parsedUnit) value(d decimal) (float64, bool) {
-	d = d.plusHundredths(u.zero)
-	x, ok := 0.0, true
-	if d.digits != "" {
-		x = u.magnitude(d)
-		ok = x != 0 && !math.IsInf(x, 0)
-	}
-	if d.neg {
-		x = -x
-	}
-	return x, ok
-}
-
-// magnitude returns the float64 nearest to the digits of d in units.
-func (u *parsedUnit) magnitude(d decimal) float64 {
-	if u.decimal() {
-		x, _ := strconv.ParseFloat(d.digits+"e"+strconv.Itoa(d.exp+u.tenExponent()), 64)
-		return x
-	}
-	if x, ok := u.quick(d); ok {
-		return x
-	}
-	return u.exact(d)
-}
-
-// exactInteger bounds the integers that float64 holds exactly.
-const exactInteger = 1 << 53
-
-// quick divides two integers that float64 holds exactly: the quotient is then
-// rounded once. It reports whether there are such integers.
-func (u *parsedUnit) quick(d decimal) (float64, bool) {
-	num, den, ok := u.smallRatio()
-	mantissa, err := strconv.ParseUint(d.digits, 10, 53)
-	exp := d.exp + u.tenExponent()
-	if !ok || err != nil || !multiply(&num, mantissa) {
-		return 0, false
-	}
-	scaled := &num
-	if exp < 0 {
-		scaled, exp = &den, -exp
-	}
-	for ; exp > 0; exp-- {
-		if !multiply(scaled, 10) {
-			return 0, false
-		}
-	}
-	return float64(num) / float64(den), den <= exactInteger && num <= exactInteger
-}
-
-// multiply multiplies x by f and reports whether it stays an exact integer.
-func multiply(x *uint64, f uint64) bool {
-	if f == 0 || *x > exactInteger/f {
-		return false
-	}
-	*x *= f
-	return true
-}
-
-// exact is magnitude for all other cases.
-func (u *parsedUnit) exact(d decimal) float64 {
-	num, den := u.ratio()
-	num.Mul(num, d.integer())
-	if exp := d.exp + u.tenExponent(); exp >= 0 {
-		num.Mul(num, pow10(exp))
-	} else {
-		den.Mul(den, pow10(-exp))
-	}
-	x, _ := new(big.Rat).SetFrac(num, den).Float64()
-	return x
-}
-
 // reading returns the finite x as a number of units, rounded to n significant
 // digits, or with n <= 0 with as many as it takes for value to return x.
 func (u *parsedUnit) reading(x float64, n int) decimal {
-	if y, _ := u.value(decimal{}); y == x && u.zero != 0 {
-		return decimal{} // 0 °C, though 273.15 K is no float64 and the nearest lies next to it
-	}
-	if u.zero == 0 && (x == 0 || u.decimal()) {
+	switch y, _ := u.value(decimal{}); {
+	case u.zero == 0 && (x == 0 || u.decimal()):
 		d := fromScientific(strconv.FormatFloat(x, 'e', max(n, 0)-1, 64))
 		d.exp -= u.tenExponent()
 		return d
+	case u.zero != 0 && x == y:
+		return decimal{} // 0 °C: the float64 next to 273.15 K is a little off it
 	}
 	if d, ok := u.quickReading(x, n); ok {
 		return d
@@ -168,8 +95,8 @@ func more(n int) int {
 // quotient returns x as a number of units, to far more digits than anyone asks.
 func (u *parsedUnit) quotient(x float64) *big.Float {
 	prec := uint(320)
-	if u.zero != 0 && math.Abs(x) < 1 {
-		prec = 4200 // so that -273.15 °C plus next to nothing stays apart
+	if _, exp := math.Frexp(x); u.zero != 0 && exp < 0 {
+		prec += uint(-exp) // so that -273.15 °C plus next to nothing stays apart
 	}
 	num, den := u.ratio()
 	if exp := u.tenExponent(); exp >= 0 {
