@@ -88,10 +88,14 @@ func newNewton(sys *system, s SteadySettings) (*newton, error) {
 const (
 	aim      = 0.04
 	tooLarge = 0.15
-	// firstImplicit is the first step, longNewton the one that is as good as
-	// infinite, in diffusion times of the layer.
-	firstImplicit = 1e-3
-	longNewton    = 10
+	// firstChange is that of the first step, so small that the step is shorter
+	// than what grows takes to grow.
+	firstChange = 1e-3
+	// longest is the step that is as good as infinite, in diffusion times of
+	// the layer.
+	longest = 10
+	// maxDetours is how often Newton's method may hand back to steps in time.
+	maxDetours = 3
 )
 
 // solve improves a temperature in place, by implicit steps in time first if
@@ -105,9 +109,10 @@ func (n *newton) solve(ctx context.Context, temperature *staggered.Scalar, far b
 	sol.Residual = n.residual(n.rate)
 	shift := 0.0
 	if far {
-		shift = n.sys.rate() / firstImplicit
+		shift = n.firstShift(sol.Residual)
 	}
 	var failure error
+	detours := 0
 	for sol.Residual > n.settings.Tolerance {
 		if sol.Newton >= n.settings.MaxNewton {
 			failure = fmt.Errorf("convection: %w after %d Newton steps: residual %.1e, tolerance %.1e",
@@ -118,9 +123,10 @@ func (n *newton) solve(ctx context.Context, temperature *staggered.Scalar, far b
 		var err error
 		if shift > 0 {
 			products, shift, err = n.implicitStep(shift)
-		} else if products, err = n.improve(sol.Residual); errors.Is(err, ErrNotSteady) && sol.Newton == 0 {
-			// The guess was further off than it seemed.
-			shift, err = n.sys.rate()/firstImplicit, nil
+		} else if products, err = n.improve(sol.Residual); errors.Is(err, ErrNotSteady) && detours < maxDetours {
+			// The state is further off than it seemed: back to steps in time.
+			shift, err = n.firstShift(sol.Residual), nil
+			detours++
 		}
 		if err != nil {
 			failure = err
@@ -149,21 +155,39 @@ func (n *newton) implicitStep(shift float64) (products int, next float64, err er
 		}
 		size := n.step.RMS() / n.extent()
 		if size <= tooLarge {
+			before := n.flow.RMS()
 			accepted, err := n.try(1, math.Inf(1))
 			if err != nil {
 				return products, shift, err
 			}
 			if accepted {
-				shift *= min(4, max(0.4, size/aim))
-				if shift*longNewton < n.sys.rate() {
-					shift = 0
-				}
-				return products, shift, nil
+				return products, n.nextShift(shift, size, before), nil
 			}
 		}
 		shift *= 4
 	}
 	return products, shift, fmt.Errorf("convection: %w: implicit steps became too short", ErrNotSteady)
+}
+
+// firstShift chooses the first step.
+func (n *newton) firstShift(residual float64) float64 {
+	return max(n.sys.fastest(), residual*n.sys.rate()/firstChange)
+}
+
+// nextShift chooses the step after one over 1/shift that changed the temperature
+// by size and the speed from before to what it is now. A mode that grows at the
+// rate σ is multiplied by 1/(1−σ/shift): a step longer than 1/σ would turn its
+// sign and lead back to the state that is being left.
+func (n *newton) nextShift(shift, size, before float64) float64 {
+	next := shift * min(4, max(0.4, size/aim))
+	if now := n.flow.RMS(); now > before {
+		growth := shift * (1 - before/now)
+		next = max(next, 2*growth)
+	}
+	if next*longest < n.sys.rate() {
+		return 0
+	}
+	return next
 }
 
 // evaluate solves for the flow of a temperature and stores R in n.rate.

@@ -55,6 +55,7 @@ type steadyCase struct {
 	rayleigh float64
 	problem  convection.Problem // but for grid and Rayleigh number
 	slow     bool               // not among the quick ones
+	fine     bool               // needs twice the cells, so only among the long ones
 }
 
 func steadyCases() []steadyCase {
@@ -77,7 +78,7 @@ func steadyCases() []steadyCase {
 		{name: "n04", width: 1, rayleigh: 2e4, problem: convection.Problem{Walls: rigid}},
 		{name: "n06", width: 1, rayleigh: 5e4, problem: convection.Problem{Heating: 5}},
 		{name: "n08", width: 1, rayleigh: 2e4, problem: convection.Problem{Viscosity: contrast(50)}, slow: true},
-		{name: "n10", width: 1, rayleigh: 100, problem: convection.Problem{Viscosity: contrast(1e5)}, slow: true},
+		{name: "n10", width: 1, rayleigh: 100, problem: convection.Problem{Viscosity: contrast(1e5)}, fine: true},
 		{name: "n12", width: 1, rayleigh: 1e5, problem: convection.Problem{Viscosity: deep}},
 		{name: "n14", width: 2, rayleigh: 2e4, problem: convection.Problem{Initial: half(1)}, slow: true},
 		{name: "n16", width: math.Sqrt2, rayleigh: 700, slow: true},
@@ -108,7 +109,12 @@ func TestSteadyStatesAgreeWithReferences(t *testing.T) {
 			if c.slow && testing.Short() {
 				t.Skip("slow")
 			}
-			study, err := convection.Refine(context.Background(), c.on(t, 96), 3, nil)
+			rows := 96
+			if c.fine {
+				long(t)
+				rows = 192
+			}
+			study, err := convection.Refine(context.Background(), c.on(t, rows), 3, nil)
 			require.NoError(t, err)
 			require.NotEmpty(t, table[c.name])
 			for name, want := range table[c.name] {
@@ -124,11 +130,17 @@ func TestSteadyStatesAgreeWithReferences(t *testing.T) {
 	}
 }
 
-// The four cases of the published benchmark on the grids of examples/verify.
-func TestBenchmarkCasesToManyDigits(t *testing.T) {
+// long skips a test unless long studies are asked for.
+func long(t *testing.T) {
+	t.Helper()
 	if os.Getenv("OVERTURN_LONG") == "" {
 		t.Skip("set OVERTURN_LONG=1 for 192x192 cells")
 	}
+}
+
+// The four cases of the published benchmark on the grids of examples/verify.
+func TestBenchmarkCasesToManyDigits(t *testing.T) {
+	long(t)
 	table := references(t)
 	bounds := map[string]float64{"1a": 1e-6, "1b": 3e-6, "1c": 3e-5, "2a": 1e-5}
 	for _, c := range steadyCases() {

@@ -65,6 +65,10 @@ func (s *sampler) diagnose(t *staggered.Scalar, flow *staggered.Flow) (Diagnosti
 	k := s.sys.Conductivity
 	d.CornerGradients = [4]float64{-corners.TopLeft / k, -corners.TopRight / k, corners.BottomRight / k, corners.BottomLeft / k}
 	d.BuoyancyWork = s.sys.work(t, flow)
+	if s.sys.viscosity != nil {
+		// What it holds may be of another temperature: one that was rejected.
+		s.sys.viscosityTo(s.sys.viscosity, t)
+	}
 	if d.Dissipation, err = s.sys.stokes.DissipationTo(nil, flow, s.sys.viscosity); err != nil {
 		return d, fmt.Errorf("convection: %w", err)
 	}

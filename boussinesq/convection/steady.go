@@ -16,7 +16,6 @@ const (
 	DefaultSteadyTolerance = 1e-6
 	DefaultMaxNewton       = 200
 	DefaultMaxDirections   = 150
-	DefaultMaxApproach     = 50000
 
 	// DefaultSteadyStokesTolerance is that of the Stokes solves behind the
 	// residual, which can be no smaller than their error times the velocity.
@@ -43,10 +42,6 @@ type SteadySettings struct {
 	// MaxDirections bounds the Krylov directions of one Newton step, each of
 	// which takes 8 bytes a cell. Default 150.
 	MaxDirections int
-
-	// MaxApproach bounds the time steps on the coarsest grid in which
-	// convection sets in. Default 50000.
-	MaxApproach int
 
 	// Guess is a temperature near the steady state. Not nil, it replaces the
 	// approach in time and the coarser grids: Newton's method starts from it on
@@ -104,9 +99,6 @@ func (s *SteadySettings) withDefaults() (SteadySettings, error) {
 	if c.MaxDirections == 0 {
 		c.MaxDirections = DefaultMaxDirections
 	}
-	if c.MaxApproach == 0 {
-		c.MaxApproach = DefaultMaxApproach
-	}
 	var inner stokes.Settings
 	if c.Stokes != nil {
 		inner = *c.Stokes
@@ -122,25 +114,19 @@ func (s *SteadySettings) withDefaults() (SteadySettings, error) {
 		return c, fmt.Errorf("convection: SteadySettings.MaxNewton is %d, want >= 0", c.MaxNewton)
 	case c.MaxDirections < 0:
 		return c, fmt.Errorf("convection: SteadySettings.MaxDirections is %d, want >= 0", c.MaxDirections)
-	case c.MaxApproach < 0:
-		return c, fmt.Errorf("convection: SteadySettings.MaxApproach is %d, want >= 0", c.MaxApproach)
 	}
 	return c, nil
-}
-
-// kernels returns the settings of the kernels with one for the flow.
-func (s *SteadySettings) kernels(flow *stokes.Settings) Settings {
-	return Settings{Stokes: flow, Heat: &heat.Settings{Advection: heat.Central, Workers: s.Workers}}
 }
 
 // Steady finds a steady state of the problem with central advection.
 //
 // Starting from the initial state it steps in time on a coarse grid, made of
-// every second, fourth, ... node of the problem's, until convection has set in,
-// goes on with implicit steps that grow as the state calms down (pseudo-
-// transient continuation, Kelley & Keyes 1998) until they are Newton steps, and
-// follows the solution from grid to grid. So the state found is one that the
-// initial state leads to, and a layer that does not convect is found at rest.
+// every second, fourth, ... node of the problem's. The steps are implicit, short
+// while convection grows and longer as the state calms down, until they are
+// Newton steps (pseudo-transient continuation, Kelley & Keyes 1998). Then it
+// follows the solution from grid to grid. Where a layer has several steady
+// states, Problem.Initial decides: the damping of long steps favours a state of
+// as many rolls as it has. A layer that does not convect is found at rest.
 // Whether the state is stable in time is not asked.
 func Steady(ctx context.Context, p Problem, s *SteadySettings) (*Solution, error) {
 	c, err := s.withDefaults()
@@ -154,9 +140,9 @@ func Steady(ctx context.Context, p Problem, s *SteadySettings) (*Solution, error
 	return solutions[len(solutions)-1], err
 }
 
-// approachRows is the number of rows above which a grid is not coarse enough
-// for the approach in time.
-const approachRows = 48
+// coarseRows is the number of rows or columns above which a grid is not coarse
+// enough to start on.
+const coarseRows = 48
 
 // steadySequence solves on the problem's grid and at least so many coarser
 // ones, coarse to fine.
@@ -190,11 +176,10 @@ func steadySequence(ctx context.Context, p Problem, s SteadySettings, grids int)
 	return solutions, nil
 }
 
-// worthCoarsening reports whether the approach should be made on a grid of half
-// the cells.
+// worthCoarsening reports whether to start on a grid of half the cells.
 func worthCoarsening(g *staggered.Grid) bool {
 	nx, nz := g.Cells()
-	return min(nx, nz) > approachRows
+	return min(nx, nz) > coarseRows
 }
 
 // coarsen returns the grid of every second node. Nodes, not cells, are dropped,
@@ -215,16 +200,18 @@ func everySecond(nodes []float64) []float64 {
 
 // steadyOn solves on one grid, from a guess or else from the initial state.
 func steadyOn(ctx context.Context, p Problem, s SteadySettings, guess *staggered.Scalar) (*Solution, error) {
-	t := staggered.NewScalar(p.Grid)
-	if guess != nil {
-		if err := checkTemperature(guess); err != nil {
-			return nil, err
-		}
-		transfer(t, guess)
-	} else if err := approach(ctx, p, s, t); err != nil {
+	sys, err := newSystem(p, Settings{Stokes: s.Stokes, Heat: &heat.Settings{Advection: heat.Central, Workers: s.Workers}})
+	if err != nil {
 		return nil, err
 	}
-	sys, err := newSystem(p, s.kernels(s.Stokes))
+	var t *staggered.Scalar
+	if guess == nil {
+		t, err = sys.start(ctx)
+	} else {
+		t = staggered.NewScalar(p.Grid)
+		transfer(t, guess)
+		err = checkTemperature(t)
+	}
 	if err != nil {
 		return nil, err
 	}
@@ -233,46 +220,4 @@ func steadyOn(ctx context.Context, p Problem, s SteadySettings, guess *staggered
 		return nil, err
 	}
 	return n.solve(ctx, t, guess == nil)
-}
-
-const (
-	// The approach lasts until fluid has crossed the layer so many times, or
-	// for this share of the diffusion time: by then what the initial state
-	// excited has decayed or grown.
-	approachCrossings = 1.5
-	approachTime      = 0.05
-	// approachTolerance is enough for the Stokes solves on the way.
-	approachTolerance = 1e-6
-)
-
-// approach stores in t the initial state, carried in time until convection has
-// set in and no longer speeds up. An implicit method with long steps, started
-// earlier, would be drawn to the state that is being left.
-func approach(ctx context.Context, p Problem, s SteadySettings, t *staggered.Scalar) error {
-	inner := *s.Stokes
-	inner.Tolerance = approachTolerance
-	kernels := s.kernels(&inner)
-	kernels.Courant = 0.9
-	kernels.Heat.Scheme = heat.Implicit
-	m, err := New(p, &kernels)
-	if err != nil {
-		return err
-	}
-	if err := m.ensureFlow(ctx); err != nil {
-		return err
-	}
-	rate, height := m.sys.rate(), m.sys.Grid.Height()
-	speed, travelled := m.flow.RMS(), 0.0
-	for range s.MaxApproach {
-		if err := m.advance(ctx); err != nil {
-			return err
-		}
-		before := speed
-		speed = m.flow.RMS()
-		travelled += speed * m.last / height
-		if speed <= before && (travelled >= approachCrossings || m.time*rate >= approachTime) {
-			break
-		}
-	}
-	return t.CopyFrom(m.temperature)
 }

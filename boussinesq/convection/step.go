@@ -109,9 +109,10 @@ func (m *Model) advance(ctx context.Context) error {
 	m.keepFlow()
 	m.iterations = iterations
 	m.last, m.hasPrevious = dt, true
-	m.time += dt
-	if left := m.settings.EndTime - m.time; math.Abs(left) <= 1e-12*m.settings.EndTime {
-		m.time = m.settings.EndTime
+	if dt == m.settings.EndTime-m.time {
+		m.time = m.settings.EndTime // exactly, whatever the sum rounds to
+	} else {
+		m.time += dt
 	}
 	m.steps++
 	m.change = m.changeRate(dt)
@@ -188,7 +189,7 @@ func (m *Model) nextStep() float64 {
 	if !m.hasPrevious {
 		// Nothing is known yet of how fast the flow changes. A step within
 		// the explicit limit of conduction is shorter than any growth.
-		dt = min(dt, m.firstStep())
+		dt = min(dt, 1/m.sys.fastest())
 	}
 	left := m.settings.EndTime - m.time
 	if dt >= left {
@@ -199,17 +200,6 @@ func (m *Model) nextStep() float64 {
 		return 0.5 * left
 	}
 	return dt
-}
-
-// firstStep returns half the diffusion time of the smallest cell.
-func (m *Model) firstStep() float64 {
-	smallest := math.Inf(1)
-	for _, widths := range [2][]float64{m.sys.Grid.DX(), m.sys.Grid.DZ()} {
-		for _, w := range widths {
-			smallest = min(smallest, w)
-		}
-	}
-	return 0.5 * smallest * smallest / m.sys.diffusivity()
 }
 
 // maxGrowth is the largest ratio of a step to the one before.

@@ -3,6 +3,7 @@ package convection
 import (
 	"context"
 	"fmt"
+	"slices"
 
 	"example.org/overturn/heat"
 	"example.org/overturn/stokes"
@@ -90,4 +91,10 @@ func (sys *system) work(t *staggered.Scalar, flow *staggered.Flow) float64 {
 		total += sum * 0.5 * (dz[k-1] + dz[k])
 	}
 	return total
+}
+
+// fastest returns twice the rate of diffusion across the smallest cell.
+func (sys *system) fastest() float64 {
+	smallest := min(slices.Min(sys.Grid.DX()), slices.Min(sys.Grid.DZ()))
+	return 2 * sys.diffusivity() / (smallest * smallest)
 }
