@@ -3,6 +3,7 @@ package scaling
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"example.org/overturn/scaling/internal/check"
 	"gonum.org/v1/gonum/mat"
@@ -104,6 +105,9 @@ func (d *design) solve() (regression, error) {
 	return regression{solution.RawVector().Data, covariance, scatter}, nil
 }
 
+// roundOff is a change of a logarithm that arithmetic alone may cause.
+const roundOff = 1e-11
+
 // curvature tests one added square at a time.
 func (d *design) curvature(groups []Group, level float64) []Curvature {
 	dof := len(d.y) - len(groups) - 2
@@ -125,10 +129,10 @@ func (d *design) curvature(groups []Group, level float64) []Curvature {
 		last := len(groups) + 1
 		c := interval(r.solution[last], math.Sqrt(r.covariance.At(last, last)), studentQuantile(level, dof))
 		p := 0.0
-		if c.StandardError > 0 {
+		if within := slices.Max(square) * math.Abs(c.Value); within < roundOff {
+			p = 1 // the last digits of a law that is exact
+		} else if c.StandardError > 0 {
 			p = 2 * distuv.StudentsT{Mu: 0, Sigma: 1, Nu: float64(dof)}.Survival(math.Abs(c.Value)/c.StandardError)
-		} else if c.Value == 0 {
-			p = 1
 		}
 		out = append(out, Curvature{Group: g, Coefficient: c, P: p})
 	}
