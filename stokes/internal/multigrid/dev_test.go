@@ -16,7 +16,7 @@ func TestDev(t *testing.T) {
 			p := newProblem(square(n), ld.eta)
 			start := time.Now()
 			it, norms := p.solve(t)
-			fmt.Printf("%-7s %4d it %3d  w %.1e m %.1e  %.0f ns/dof jumps %d levels %d\n", ld.name, n, it, norms.Weighted, norms.Momentum, float64(time.Since(start).Nanoseconds())/float64(3*n*n), len(p.sv.Finest().jumps), len(p.sv.Levels))
+			fmt.Printf("%-7s %4d it %3d  w %.1e m %.1e  %.0f ns/dof jumps %d levels %d\n", ld.name, n, it, norms.Weighted, norms.Momentum, float64(time.Since(start).Nanoseconds())/float64(3*n*n), len(p.sv.Finest().jumps.columns), len(p.sv.Levels))
 		}
 	}
 }

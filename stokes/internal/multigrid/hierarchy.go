@@ -54,6 +54,7 @@ func NewHierarchy(x, z Axis, t *team.Team) *Hierarchy {
 		}
 		h.blocks = append(h.blocks, blocks)
 		l.makePasses(t, blocks, c, h.s)
+		l.makeJumps(t.Size())
 	}
 	last := h.Finest().cells()
 	for k, l := range h.Levels {
@@ -151,28 +152,28 @@ func (h *Hierarchy) descend(k int) {
 // taken apart by the relaxation of jumps.
 func (h *Hierarchy) down(k int, all, smooth *pipeline) {
 	l := h.Levels[k]
-	if len(l.jumps) == 0 {
+	if l.jumps.none() {
 		all.run()
 		return
 	}
 	if smooth == l.passes.fresh {
 		l.u.clear()
 	}
-	l.relaxJumps(jumpsSweeps)
+	h.relaxJumps(k)
 	l.passes.sweep.run()
-	l.relaxJumps(jumpsSweeps)
+	h.relaxJumps(k)
 	l.passes.restrict.run()
 }
 
 // up takes the correction from the level below level k and smooths.
 func (h *Hierarchy) up(k int) {
 	l := h.Levels[k]
-	if len(l.jumps) == 0 {
+	if l.jumps.none() {
 		l.passes.up.run()
 		return
 	}
 	l.passes.prolong.run()
-	l.relaxJumps(jumpsSweeps)
+	h.relaxJumps(k)
 	l.passes.sweep.run()
-	l.relaxJumps(jumpsSweeps)
+	h.relaxJumps(k)
 }

@@ -1,131 +1,199 @@
 package multigrid
 
+import "example.org/overturn/stokes/internal/team"
+
 // Near a jump of viscosity the distributive sweep smooths badly: a cell on
 // the stiff side needs velocity and pressure changed together. There, and
 // only there, each level is relaxed cell by cell (Vanka 1986, with the
 // diagonal of the momentum equations), which costs nothing where the viscosity
 // is smooth.
+//
+// The cells of a row are relaxed one after the other. Rows three apart share
+// no face, not even to read, so that every third row may be relaxed at the
+// same time.
 
 const (
-	jumpRatio   = 20.0 // of viscosities within jumpRadius that makes a jump
-	jumpRadius  = 2    // in cells
-	jumpsSweeps = 4    // before and after each smoothing
+	jumpRatio   = 20.0 // of viscosities near a cell that makes it one of them
+	jumpColours = 3
+	jumpShare   = 4000 // cells from which goroutines share the work
 )
+
+// A level where neighbours differ by more than jumpRatio is relaxed eight times
+// before and after each smoothing. Where the viscosity is smooth but as steep
+// as that over some cells, as it becomes on coarse levels, half of it is enough.
+const (
+	jumpRadius  = 2
+	sharpSweeps = 8
+	steepSweeps = 4
+)
+
+// jumps lists the cells near jumps, row by row.
+type jumps struct {
+	columns []int32
+	from    []int // from[j]: where row j begins in columns; one more than rows
+
+	sweeps int
+	ratios [2][]float64 // lowest and highest viscosity of the rows around one
+
+	backwards bool // of the sweep under way
+	colour    int
+	share     func(part int)
+}
+
+func (jp *jumps) none() bool { return len(jp.columns) == 0 }
+
+// row returns the columns of the cells of row j.
+func (jp *jumps) row(j int) []int32 { return jp.columns[jp.from[j]:jp.from[j+1]] }
+
+// makeJumps prepares the level for findJumps and relaxJumps.
+func (l *Level) makeJumps(parts int) {
+	l.jumps.from = make([]int, l.rows+1)
+	l.jumps.ratios = [2][]float64{make([]float64, l.stride+2*jumpRadius), make([]float64, l.stride+2*jumpRadius)}
+	l.jumps.share = func(part int) {
+		rows := (l.Z.N + jumpColours - 1) / jumpColours
+		lo, hi := team.Block(rows, part, parts)
+		for k := lo; k < hi; k++ {
+			if j := 1 + l.jumps.colour + k*jumpColours; j <= l.Z.N {
+				l.relaxRow(j)
+			}
+		}
+	}
+}
 
 // findJumps lists the cells whose neighbourhood holds a jump.
 func (l *Level) findJumps() {
-	l.jumps = l.jumps[:0]
-	n, m := l.X.N, l.Z.N
-	for j := 1; j <= m; j++ {
-		j0, j1 := max(1, j-jumpRadius), min(m, j+jumpRadius)
-		for i := 1; i <= n; i++ {
-			lowest, highest := l.Eta[j*l.stride+i], l.Eta[j*l.stride+i]
-			for jj := j0; jj <= j1; jj++ {
-				for ii := i - jumpRadius; ii <= i+jumpRadius; ii++ {
-					c := ii
-					if l.X.wraps() {
-						c = (ii-1+2*n)%n + 1
-					} else if ii < 1 || ii > n {
-						continue
-					}
-					e := l.Eta[jj*l.stride+c]
-					lowest, highest = min(lowest, e), max(highest, e)
-				}
-			}
-			if highest > jumpRatio*lowest {
-				l.jumps = append(l.jumps, j*l.stride+i)
-			}
-		}
-	}
-}
-
-// relaxJumps makes sweeps over the cells near jumps, forwards and backwards in
-// turn.
-func (l *Level) relaxJumps(sweeps int) {
-	if len(l.jumps) == 0 {
+	jp := &l.jumps
+	jp.columns = jp.columns[:0]
+	clear(jp.from)
+	contrast, steepest := l.contrasts()
+	if contrast <= jumpRatio {
 		return
 	}
-	for s := range sweeps {
-		for k := range l.jumps {
-			if s&1 == 1 {
-				k = len(l.jumps) - 1 - k
+	jp.sweeps = steepSweeps
+	if steepest > jumpRatio {
+		jp.sweeps = sharpSweeps
+	}
+	for j := 1; j <= l.Z.N; j++ {
+		jp.from[j] = len(jp.columns)
+		l.rowRatios(j)
+		lowest, highest := jp.ratios[0], jp.ratios[1]
+		for i := 1; i <= l.X.N; i++ {
+			lo, hi := lowest[i], highest[i]
+			for d := 1; d <= 2*jumpRadius; d++ {
+				lo, hi = min(lo, lowest[i+d]), max(hi, highest[i+d])
 			}
-			l.relaxCell(l.jumps[k])
+			if hi > jumpRatio*lo {
+				jp.columns = append(jp.columns, int32(i))
+			}
+		}
+	}
+	jp.from[l.Z.N+1] = len(jp.columns)
+}
+
+// contrasts returns the ratio of the largest to the smallest viscosity, and the
+// largest ratio of two neighbours.
+func (l *Level) contrasts() (all, neighbours float64) {
+	lo, hi := l.Eta[l.stride+1], l.Eta[l.stride+1]
+	steepest := 1.0
+	for j := 1; j <= l.Z.N; j++ {
+		e, above := l.row(l.Eta, j)[:l.stride], l.row(l.Eta, j+1)[:l.stride]
+		for i := 1; i < len(e)-1; i++ {
+			v := e[i]
+			if v < lo {
+				lo = v
+			}
+			if v > hi {
+				hi = v
+			}
+			// The largest of four ratios without a division each.
+			if v > steepest*e[i+1] || e[i+1] > steepest*v {
+				steepest = max(v/e[i+1], e[i+1]/v)
+			}
+			if v > steepest*above[i] || above[i] > steepest*v {
+				steepest = max(v/above[i], above[i]/v)
+			}
+		}
+	}
+	return hi / lo, steepest
+}
+
+// rowRatios stores the lowest and highest viscosity of each column within
+// jumpRadius of row j, column i at i+jumpRadius, and what lies around: the other
+// side of a periodic box, or the outermost columns again.
+func (l *Level) rowRatios(j int) {
+	const radius = jumpRadius
+	n := l.X.N
+	lowest, highest := l.jumps.ratios[0], l.jumps.ratios[1]
+	lo, hi := lowest[1+radius:][:n], highest[1+radius:][:n]
+	copy(lo, l.row(l.Eta, j)[1:])
+	copy(hi, lo)
+	for k := max(1, j-radius); k <= min(l.Z.N, j+radius); k++ {
+		for i, e := range l.row(l.Eta, k)[1 : n+1] {
+			if e < lo[i] {
+				lo[i] = e
+			}
+			if e > hi[i] {
+				hi[i] = e
+			}
+		}
+	}
+	for d := 1; d <= radius; d++ {
+		left, right := 0, n-1
+		if l.X.wraps() {
+			left, right = ((n-d)%n+n)%n, (d-1)%n
+		}
+		lowest[1+radius-d], highest[1+radius-d] = lo[left], hi[left]
+		lowest[radius+n+d], highest[radius+n+d] = lo[right], hi[right]
+	}
+}
+
+// relaxJumps makes sweeps over the cells near jumps of level k, forwards and
+// backwards in turn.
+func (h *Hierarchy) relaxJumps(k int) {
+	l := h.Levels[k]
+	jp := &l.jumps
+	if jp.none() {
+		return
+	}
+	for s := range jp.sweeps {
+		jp.backwards = s&1 == 1
+		for c := range jumpColours {
+			jp.colour = c
+			if jp.backwards {
+				jp.colour = jumpColours - 1 - c
+			}
+			if len(jp.columns) >= jumpShare {
+				h.team.Run(jp.share)
+				continue
+			}
+			for j := 1 + jp.colour; j <= l.Z.N; j += jumpColours {
+				l.relaxRow(j)
+			}
 		}
 	}
 }
 
-// relaxCell removes the mass defect of one cell together with the momentum
-// defects of its four faces, as far as the diagonal knows them.
-func (l *Level) relaxCell(c int) {
-	w := l.stride
-	j, i := c/w, c%w
-	dz, dx := l.Z.H[j], l.X.H[i]
-	u, r := l.u, c+1
-	t := c + w
-	ixl, ixr, izb, izt := l.ix[c], l.ix[r], l.iz[c], l.iz[t]
-	right := i + 1
-	if i == l.X.N && l.X.wraps() {
-		right = 1
+// relaxRow relaxes the marked cells of row j.
+func (l *Level) relaxRow(j int) {
+	columns := l.jumps.row(j)
+	if len(columns) == 0 {
+		return
 	}
-	rl, rr := l.defectX(i, j), l.defectX(right, j)
-	rb, rt := 0.0, 0.0
-	if j > 1 {
-		rb = l.defectZ(i, j)
-	}
-	if j < l.Z.N {
-		rt = l.defectZ(i, j+1)
-	}
-	rp := l.f.P[c] + dz*(u.X[r]-u.X[c]) + dx*(u.Z[t]-u.Z[c])
-	dp := (dz*(ixl*rl-ixr*rr) + dx*(izb*rb-izt*rt) - rp) * l.is[c]
-	u.P[c] += dp
-	u.X[c] += ixl * (rl - dz*dp)
-	u.X[r] += ixr * (rr + dz*dp)
-	u.Z[c] += izb * (rb - dx*dp)
-	u.Z[t] += izt * (rt + dx*dp)
-	if l.X.wraps() && (i == 1 || i == l.X.N) {
-		if i == l.X.N {
-			u.X[j*w+1] = u.X[r] // the seam has two slots
+	c := l.cutRow(j)
+	for k := range columns {
+		if l.jumps.backwards {
+			k = len(columns) - 1 - k
 		}
-		l.wrapX(l.row(u.X, j))
-		l.wrapX(l.row(u.Z, j))
-		l.wrapX(l.row(u.Z, j+1))
-		l.wrapX(l.row(u.P, j))
+		i := int(columns[k])
+		c.relax(i)
+		if l.X.wraps() && (i == 1 || i == l.X.N) {
+			if i == l.X.N {
+				c.x[1] = c.x[i+1] // the face at the seam has two slots
+			}
+			l.wrapX(c.x)
+			l.wrapX(c.z[1])
+			l.wrapX(c.z[2])
+			l.wrapX(c.p[1])
+		}
 	}
-}
-
-// defectX is the residual of the x-momentum equation at the left face of
-// cell (i, j), zero on a wall.
-func (l *Level) defectX(i, j int) float64 {
-	w := l.stride
-	c := j*w + i
-	if l.ix[c] == 0 {
-		return 0
-	}
-	x, z, u := &l.X, &l.Z, &l.u
-	v := u.X[c]
-	west := c - 1
-	if i == 1 {
-		west = c + x.N - 1
-	}
-	r := l.f.X[c] + z.H[j]*(2*l.Eta[c]*x.RH[i]*(u.X[c+1]-v)-2*l.Eta[c-1]*x.RH[i-1]*(v-u.X[west])+u.P[c-1]-u.P[c])
-	r += l.en[c+w] * (x.D[i]*z.RD[j+1]*(u.X[c+w]-v) + u.Z[c+w] - u.Z[c+w-1])
-	r -= l.en[c] * (x.D[i]*z.RD[j]*(v-u.X[c-w]) + u.Z[c] - u.Z[c-1])
-	return r
-}
-
-// defectZ is the residual of the z-momentum equation at the lower face of
-// cell (i, j), zero on a wall.
-func (l *Level) defectZ(i, j int) float64 {
-	w := l.stride
-	c := j*w + i
-	if l.iz[c] == 0 {
-		return 0
-	}
-	x, z, u := &l.X, &l.Z, &l.u
-	v := u.Z[c]
-	r := l.f.Z[c] + x.H[i]*(2*l.Eta[c]*z.RH[j]*(u.Z[c+w]-v)-2*l.Eta[c-w]*z.RH[j-1]*(v-u.Z[c-w])+u.P[c-w]-u.P[c])
-	r += l.en[c+1] * (z.D[j]*x.RD[i+1]*(u.Z[c+1]-v) + u.X[c+1] - u.X[c+1-w])
-	r -= l.en[c] * (z.D[j]*x.RD[i]*(v-u.Z[c-1]) + u.X[c] - u.X[c-w])
-	return r
 }

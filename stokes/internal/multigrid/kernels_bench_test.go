@@ -79,3 +79,17 @@ func BenchmarkKernels(b *testing.B) {
 type noLoad struct{}
 
 func (noLoad) AddRow(int, []float64, []float64, []float64) {}
+
+func BenchmarkRelaxJumps(b *testing.B) {
+	p := newProblem(square(256), circles(1e3))
+	sv := p.sv
+	sv.X.clear()
+	sv.Residual(p)
+	sv.grow(1)
+	sv.Precondition(sv.z[0], sv.R)
+	jp := &sv.Finest().jumps
+	for b.Loop() {
+		sv.relaxJumps(0)
+	}
+	b.ReportMetric(float64(b.Elapsed().Nanoseconds())/float64(b.N*len(jp.columns)*jp.sweeps), "ns/cell")
+}

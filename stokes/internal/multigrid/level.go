@@ -16,7 +16,7 @@ type Level struct {
 	u Fields // correction
 	f Fields // right-hand side
 
-	jumps []int // cells near jumps of viscosity, in storage order
+	jumps jumps // cells near jumps of viscosity
 
 	mx, mz *merge // to the next coarser level; nil on the coarsest
 	passes passes
