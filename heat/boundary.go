@@ -99,11 +99,22 @@ func (op *operator) setWalls(walls *Walls) error {
 	op.temperatureAt = false
 	for _, s := range staggered.Sides() {
 		wall := walls.side(s)
+		if wall.kind == prescribedTemperature || wall.kind == heatTransfer && wall.coefficient > 0 {
+			op.temperatureAt = true
+		}
+	}
+	return op.fillWalls(&op.walls, walls)
+}
+
+// fillWalls computes the coefficients of all walls into lines.
+func (op *operator) fillWalls(lines *[4]wallLine, walls *Walls) error {
+	for _, s := range staggered.Sides() {
+		wall := walls.side(s)
 		along, n := op.g.XCentres(), op.nx
 		if !s.Horizontal() {
 			along, n = op.g.ZCentres(), op.nz
 		}
-		line := &op.walls[s]
+		line := &lines[s]
 		if line.b == nil {
 			*line = newWallLine(n)
 		}
@@ -117,9 +128,6 @@ func (op *operator) setWalls(walls *Walls) error {
 				return fmt.Errorf("heat: %v wall (%v) has the value %v at %g, want a finite number", s, wall, value, at)
 			}
 			line.fill(j, wall, value, op.capacity, op.wallConductance(s, j))
-		}
-		if line.isothermal || wall.kind == heatTransfer && wall.coefficient > 0 {
-			op.temperatureAt = true
 		}
 	}
 	return nil

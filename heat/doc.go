@@ -7,7 +7,8 @@
 // with the heat capacity per volume C = ρ·cp and the conductivity k constant or
 // given for each cell, and a velocity free of divergence at the faces. Each wall
 // is held at a temperature, lets a given flux pass, exchanges heat with its
-// surroundings, or insulates; the sides may be periodic.
+// surroundings, or insulates; its values may change in time ([Stepper.MoveWalls]).
+// The sides may be periodic.
 //
 //	st, err := heat.NewStepper(heat.Equation{Grid: g, Walls: heat.Walls{Bottom: heat.Isothermal(1), Top: heat.Isothermal(0)}}, nil)
 //	rep, err := st.Step(ctx, temperature, flow, 0.9*st.StableStep(flow))

@@ -27,7 +27,8 @@ type Equation struct {
 	HeatCapacity *staggered.Scalar
 
 	// Source is the heat produced per volume and time; nil means none. It is
-	// read at every step and may change between steps.
+	// read at every step and may change between steps; the values of the
+	// middle of the next step keep it at second order.
 	Source *staggered.Scalar
 }
 

@@ -18,6 +18,7 @@ type Stepper struct {
 	set    Settings
 	source *staggered.Scalar
 	walls  Walls
+	motion motion
 
 	sweep    *sweep
 	stage    [2][]float64 // states within a step
@@ -53,31 +54,6 @@ func NewStepper(eq Equation, s *Settings) (*Stepper, error) {
 // Grid returns the grid of the equation.
 func (st *Stepper) Grid() *staggered.Grid { return st.op.g }
 
-// SetWalls replaces the values of the walls, for conditions that change in
-// time: set them to those of the middle of the next step to stay second order.
-// Sides cannot become periodic or cease to be. On error the walls are as before.
-func (st *Stepper) SetWalls(w Walls) error {
-	if err := w.check(); err != nil {
-		return err
-	}
-	if (w.Left.kind == periodic) != st.op.ring {
-		return fmt.Errorf("heat: left wall was %v and becomes %v, want both periodic or neither", st.walls.Left, w.Left)
-	}
-	old := st.walls
-	if err := st.op.setWalls(&w); err != nil {
-		return errors.Join(err, st.op.setWalls(&old))
-	}
-	st.walls = w
-	if w.conductsAs(&old) {
-		return nil
-	}
-	st.op.bound()
-	if st.implicit != nil {
-		st.implicit = newImplicit(st.op, st.set.Workers)
-	}
-	return nil
-}
-
 // Step advances temperature by dt under the flow; nil is a fluid at rest. The
 // report tells where the heat came from. On error the temperature is unchanged.
 func (st *Stepper) Step(ctx context.Context, temperature *staggered.Scalar, flow *staggered.Flow, dt float64) (Report, error) {
@@ -92,15 +68,8 @@ func (st *Stepper) Step(ctx context.Context, temperature *staggered.Scalar, flow
 	}
 	st.sweep.begin(st.set.Advection, flow, st.source)
 	rep := Report{Step: dt}
-	var err error
-	switch st.set.Scheme {
-	case RungeKutta2:
-		err = st.rungeKutta2(temperature.Values, dt, &rep)
-	case Implicit:
-		err = st.rosenbrock(temperature.Values, dt, &rep)
-	default:
-		err = st.rungeKutta3(temperature.Values, dt, &rep)
-	}
+	err := st.advance(temperature.Values, dt, &rep)
+	st.settle(err)
 	if errors.Is(err, errTooLong) {
 		return Report{}, &StepError{Step: dt, Stable: st.stableStep(flow)}
 	}
@@ -108,6 +77,17 @@ func (st *Stepper) Step(ctx context.Context, temperature *staggered.Scalar, flow
 		return Report{}, st.blame(err, temperature, flow)
 	}
 	return rep, nil
+}
+
+// advance takes a step by the scheme of the settings.
+func (st *Stepper) advance(t []float64, dt float64, rep *Report) error {
+	switch st.set.Scheme {
+	case RungeKutta2:
+		return st.rungeKutta2(t, dt, rep)
+	case Implicit:
+		return st.rosenbrock(t, dt, rep)
+	}
+	return st.rungeKutta3(t, dt, rep)
 }
 
 // errTooLong reports a step beyond the stable one.
@@ -132,6 +112,7 @@ func (st *Stepper) rungeKutta2(t []float64, dt float64, rep *Report) error {
 	if err := st.first(u, t, rows.Weights{Now: 1, Rate: dt}, 1./2, dt, rep); err != nil {
 		return err
 	}
+	st.moveTo(1)
 	return st.sweep.run(t, t, u, rows.Weights{Old: 1. / 2, Now: 1. / 2, Rate: dt / 2}, 1./2, rep)
 }
 
@@ -141,9 +122,11 @@ func (st *Stepper) rungeKutta3(t []float64, dt float64, rep *Report) error {
 	if err := st.first(u, t, rows.Weights{Now: 1, Rate: dt}, 1./6, dt, rep); err != nil {
 		return err
 	}
+	st.moveTo(1)
 	if err := st.sweep.run(v, t, u, rows.Weights{Old: 3. / 4, Now: 1. / 4, Rate: dt / 4}, 1./6, rep); err != nil {
 		return err
 	}
+	st.moveTo(1. / 2)
 	return st.sweep.run(t, t, v, rows.Weights{Old: 1. / 3, Now: 2. / 3, Rate: dt * 2 / 3}, 2./3, rep)
 }
 

@@ -280,3 +280,56 @@ func TestEqualGridsFit(t *testing.T) {
 	_, err = st.Step(ctx, staggered.NewScalar(g), staggered.NewFlow(longer), 1e-3)
 	require.ErrorIs(t, err, ErrSize)
 }
+
+// Walls that move to where they are change nothing; others arrive, and the
+// budget closes on the way; a step that fails leaves them at the start.
+func TestMoveWalls(t *testing.T) {
+	everyMethod(t, func(t *testing.T, s Settings) {
+		g := uniform(t, 9, 7, 1, 1)
+		from := Walls{Bottom: Isothermal(1), Top: Robin(2, 0.5), Left: Flux(1)}
+		to := Walls{Bottom: Isothermal(2), Top: Robin(2, 1.5), Left: Flux(-1)}
+		st, err := NewStepper(Equation{Grid: g, Walls: from}, &s)
+		require.NoError(t, err)
+		fresh, err := NewStepper(Equation{Grid: g, Walls: from}, &s)
+		require.NoError(t, err)
+		flow := throughFlow(g)
+		dt := math.Min(1e-3, st.StableStep(flow))
+		a, b := staggered.NewScalar(g), staggered.NewScalar(g)
+		require.NoError(t, st.MoveWalls(from))
+		integrate(t, st, a, flow, dt, 1)
+		integrate(t, fresh, b, flow, dt, 1)
+		require.InDeltaSlice(t, b.Values, a.Values, 1e-14)
+
+		require.NoError(t, st.MoveWalls(to))
+		_, err = st.Step(context.Background(), a, flow, 1e3)
+		require.Error(t, err)
+		before, start := make([]float64, 9), make([]float64, 9)
+		_, err = fresh.WallFluxTo(start, staggered.Bottom, a, flow)
+		require.NoError(t, err)
+		_, err = st.WallFluxTo(before, staggered.Bottom, a, flow)
+		require.NoError(t, err)
+		require.InDeltaSlice(t, start, before, 1e-12, "still at the start")
+		content, err := st.HeatContent(a)
+		require.NoError(t, err)
+		rep, err := st.Step(context.Background(), a, flow, dt)
+		require.NoError(t, err)
+		after, err := st.HeatContent(a)
+		require.NoError(t, err)
+		require.InDelta(t, rep.Step*rep.Power(), after-content, 1e-14)
+		require.InDelta(t, 0, rep.Conducted[staggered.Left], 0.2, "between 1 and -1")
+
+		require.NoError(t, fresh.SetWalls(to))
+		for _, side := range staggered.Sides() {
+			p, err := st.WallFluxTo(nil, side, a, flow)
+			require.NoError(t, err)
+			q, err := fresh.WallFluxTo(nil, side, a, flow)
+			require.NoError(t, err)
+			require.InDeltaSlice(t, q, p, 1e-12, "arrived")
+		}
+		require.ErrorContains(t, st.MoveWalls(Walls{}), "want the same kinds")
+		require.Error(t, st.MoveWalls(Walls{Top: Periodic}))
+		bad := to
+		bad.Left = Flux(math.Inf(1))
+		require.Error(t, st.MoveWalls(bad))
+	})
+}
