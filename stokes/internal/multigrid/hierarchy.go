@@ -10,6 +10,8 @@ type Hierarchy struct {
 	blocks []int  // members that work on each level
 	branch []bool // levels that an F-cycle visits twice
 	bottom *dense
+	finish *pipeline // replaces the last pass of a cycle, if not nil
+	done   bool      // that it did
 	s      []*scratch
 }
 
@@ -110,6 +112,7 @@ func (h *Hierarchy) run(k int, pass func(member int)) {
 func (h *Hierarchy) Precondition(z, r Fields) {
 	l := h.Finest()
 	l.u, l.f = z, r
+	h.done = false
 	h.cycle(0)
 }
 
@@ -168,6 +171,11 @@ func (h *Hierarchy) down(k int, all, smooth *pipeline) {
 // up takes the correction from the level below level k and smooths.
 func (h *Hierarchy) up(k int) {
 	l := h.Levels[k]
+	if k == 0 && l.jumps.none() && h.finish != nil {
+		h.finish.run()
+		h.done = true
+		return
+	}
 	if l.jumps.none() {
 		l.passes.up.run()
 		return

@@ -27,9 +27,12 @@ func newScratch(stride int) *scratch {
 	}
 }
 
+// forget makes the next row start afresh.
+func (s *scratch) forget() { s.of = nil }
+
 // begin prepares s for operatorRow from row j upwards.
 func (l *Level) begin(s *scratch, u Fields, j int) {
-	s.of = nil
+	s.forget()
 	l.shearRow(s.tauUp, u, j)
 	if j > 1 {
 		l.normalRow(s.szzUp, u, j-1)

@@ -11,6 +11,7 @@ type passes struct {
 	// Where there are jumps, whose relaxation is not by rows, it is taken apart.
 	freshDown, down, up             *pipeline
 	fresh, sweep, restrict, prolong *pipeline
+	upStages                        []stage
 }
 
 // sweepStages are the distributive sweep. The lags and leads follow from what
@@ -59,11 +60,12 @@ func (l *Level) makePasses(t *team.Team, blocks int, c *Level, s []*scratch) {
 		for _, p := range parts {
 			all = append(all, p...)
 		}
-		return newPipeline(l.Z.N, t, blocks, all)
+		return newPipeline(l.Z.N, t, blocks, s, all)
 	}
 	l.passes.freshDown = make(fresh, restrict)
 	l.passes.down = make(sweep, restrict)
-	l.passes.up = make(prolong, shifted(sweep, 1))
+	l.passes.upStages = append(prolong, shifted(sweep, 1)...)
+	l.passes.up = make(l.passes.upStages)
 	l.passes.fresh = make(fresh)
 	l.passes.sweep = make(sweep)
 	l.passes.restrict = make(restrict)

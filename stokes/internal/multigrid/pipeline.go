@@ -24,6 +24,7 @@ type stage struct {
 type pipeline struct {
 	stages []stage
 	rows   int
+	s      []*scratch
 	team   *team.Team
 	blocks int
 	block  func(member int)
@@ -43,8 +44,8 @@ func shifted(stages []stage, rows int) []stage {
 // sum of the largest lag and lead, which keeps borders apart.
 const leastBlock = 28
 
-func newPipeline(rows int, t *team.Team, blocks int, stages []stage) *pipeline {
-	p := &pipeline{stages: stages, rows: rows, team: t, blocks: max(1, min(blocks, rows/leastBlock))}
+func newPipeline(rows int, t *team.Team, blocks int, s []*scratch, stages []stage) *pipeline {
+	p := &pipeline{stages: stages, rows: rows, s: s, team: t, blocks: max(1, min(blocks, rows/leastBlock))}
 	p.block, p.border = p.runBlock, p.runBorder
 	return p
 }
@@ -64,6 +65,7 @@ func (p *pipeline) runBlock(member int) {
 	if member >= p.blocks {
 		return
 	}
+	p.s[member].forget()
 	lo, hi := team.Block(p.rows, member, p.blocks)
 	lo, hi = lo+1, hi+1
 	last := p.stages[len(p.stages)-1].lag
@@ -90,6 +92,7 @@ func (p *pipeline) runBorder(member int) {
 	if member+1 >= p.blocks {
 		return
 	}
+	p.s[member].forget()
 	_, border := team.Block(p.rows, member, p.blocks)
 	border++
 	for s := range p.stages {

@@ -86,6 +86,11 @@ func NewSolver(x, z Axis, t *team.Team) *Solver {
 	}
 	sv.residualPass = rows(sv.residualRow, func(s *scratch, j int) { l.begin(s, sv.X, j) })
 	sv.applyPass = rows(sv.applyRow, func(s *scratch, j int) { l.begin(s, sv.z[sv.k], j) })
+	if l.mx != nil {
+		// The operator can follow the last sweep of the cycle row by row.
+		apply := stage{func(m, j int) { sv.applyAfter(sv.s[m], j) }, 8, 9}
+		sv.finish = newPipeline(l.Z.N, t, sv.blocks[0], sv.s, append(l.passes.upStages, apply))
+	}
 	sv.dotPass = rows(sv.dotsRow, nil)
 	sv.updatePass = rows(sv.updateRow, nil)
 	sv.combinePass = rows(sv.combineRow, nil)
@@ -204,7 +209,9 @@ func (sv *Solver) round(ctx context.Context, lim Limits, done int, start float64
 func (sv *Solver) iterate() (float64, bool) {
 	k, m := sv.k, len(sv.z)
 	sv.Precondition(sv.z[k], sv.R)
-	sv.run(0, sv.applyPass)
+	if !sv.done {
+		sv.run(0, sv.applyPass)
+	}
 	clear(sv.beta[k*m:][:k])
 	t := sv.total(k + 2)
 	rest, ok := sv.orthogonalise(t)
@@ -325,6 +332,16 @@ func (sv *Solver) applyRow(s *scratch, j int) {
 		qx[i], qz[i], qp[i] = -rx[i], -rz[i], -rp[i]
 	}
 	sv.dotsRow(s, j)
+}
+
+// applyAfter does so for rows that become ready one after the other.
+func (sv *Solver) applyAfter(s *scratch, j int) {
+	l := sv.Finest()
+	if j == 1 || s.of != l || s.at != j {
+		l.begin(s, sv.z[sv.k], j)
+	}
+	sv.applyRow(s, j)
+	s.of, s.at = l, j+1
 }
 
 // dotsRow computes row j of the inner products of q[k] with the earlier q,
