@@ -138,7 +138,7 @@ func long(t *testing.T) {
 	}
 }
 
-// The four cases of the published benchmark on the grids of examples/verify.
+// The four cases of the published benchmark on finer grids.
 func TestBenchmarkCasesToManyDigits(t *testing.T) {
 	long(t)
 	table := references(t)
