@@ -193,6 +193,10 @@ func (b *bound) driven(t [3]float64, drive [3]float64, n Number) float64 {
 	return sum
 }
 
+// exactShare keeps the bound below the truth where the two are equal, as between
+// free isothermal boundaries.
+const exactShare = 1 - 1e-9
+
 // lower returns the bound for a number at wavenumber k > 0, the other numbers
 // having fixed values. Zero means that nothing is known.
 func (b *bound) lower(k float64, n Number, fixed [3]float64) float64 {
@@ -201,7 +205,7 @@ func (b *bound) lower(k float64, n Number, fixed [3]float64) float64 {
 	if left <= 0 || t[n] == 0 {
 		return 0
 	}
-	return left / t[n]
+	return exactShare * left / t[n]
 }
 
 // growth returns a rate that no disturbance of wavenumber k exceeds, or zero

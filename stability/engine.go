@@ -12,9 +12,10 @@ import (
 type engine struct {
 	still, moving *ladder
 	bound         bounder
-	longWave      bool // the still system has a finite limit at k = 0
-	bottomless    bool // Ra → 0 as k → 0
-	diffuses      bool // growth rates near zero are differences of rates like k²
+	from          float64 // smallest wavenumber of a search
+	longWave      bool    // the still system has a finite limit at k = 0
+	bottomless    bool    // Ra → 0 as k → 0
+	diffuses      bool    // growth rates near zero are differences of rates like k²
 	tolerance     float64
 	maxUnknowns   int
 }

@@ -103,6 +103,7 @@ func (g *growing) fastest() (answer, error) {
 		return a, err
 	}
 	s := &search{
+		from: g.from,
 		sample: func(k float64) (sample, error) {
 			if g.bound.growth(k, g.drive) == 0 {
 				return none(k), nil

@@ -136,7 +136,7 @@ func (h CoolingHalfSpace) question() (*question, error) {
 	if !finiteFrom(h.Exponent, -0.5) || h.Exponent == -0.5 {
 		return nil, &InputError{"CoolingHalfSpace.Exponent", h.Exponent, "finite and > -1/2"}
 	}
-	e := &engine{bound: halfSpaceBound{h}, tolerance: DefaultTolerance, maxUnknowns: DefaultMaxUnknowns}
+	e := &engine{bound: halfSpaceBound{h}, from: leastWavenumber, tolerance: DefaultTolerance, maxUnknowns: DefaultMaxUnknowns}
 	e.still = &ladder{system: h.system()}
 	return &question{engine: e, number: ThermalRayleigh}, nil
 }

@@ -77,7 +77,12 @@ const (
 	Insulating MagneticWall = iota
 	// Conducting walls conduct perfectly: the normal field does not change.
 	Conducting
+	// VerticalField holds the field vertical at the boundary: an idealisation
+	// that has closed solutions between free boundaries.
+	VerticalField
 )
+
+func (w MagneticWall) known() bool { return w >= Insulating && w <= VerticalField }
 
 // Solute is a component whose gradient contributes to buoyancy and which
 // diffuses more slowly, or faster, than heat.
@@ -108,6 +113,8 @@ const (
 	// NoFlux lets no disturbance of the flux of solute through.
 	NoFlux
 )
+
+func (w SoluteWall) known() bool { return w == FixedConcentration || w == NoFlux }
 
 // A Number is a dimensionless number that drives, or hinders, motion.
 type Number int
@@ -192,6 +199,10 @@ func (l Layer) check() error {
 		{"solute diffusivity", l.Solute.Diffusivity, finiteFrom(l.Solute.Diffusivity, 0), "finite and > 0, or 0 for no solute"},
 		{"solute Rayleigh number", l.Solute.Rayleigh, finiteFrom(l.Solute.Rayleigh, math.Inf(-1)), "finite"},
 		{"Marangoni number", l.Marangoni, finiteFrom(l.Marangoni, math.Inf(-1)), "finite"},
+		{"electrical condition at the bottom", float64(l.Magnetic.Bottom), l.Magnetic.Bottom.known(), "one of the declared ones"},
+		{"electrical condition at the top", float64(l.Magnetic.Top), l.Magnetic.Top.known(), "one of the declared ones"},
+		{"condition on the solute at the bottom", float64(l.Solute.Bottom), l.Solute.Bottom.known(), "one of the declared ones"},
+		{"condition on the solute at the top", float64(l.Solute.Top), l.Solute.Top.known(), "one of the declared ones"},
 	} {
 		if !c.ok {
 			return &InputError{c.name, c.value, c.want}

@@ -92,7 +92,7 @@ func (m *Mode) real(field, order int, z float64) float64 {
 
 // findPeak returns the height of the largest velocity.
 func (m *Mode) findPeak() float64 {
-	const perElement = 24
+	const perElement = 16
 	at, largest, step := 0.0, -1.0, 0.0
 	for e := range len(m.layout.Nodes) - 1 {
 		a, h := m.layout.Nodes[e], m.layout.Nodes[e+1]-m.layout.Nodes[e]
@@ -105,18 +105,33 @@ func (m *Mode) findPeak() float64 {
 		}
 	}
 	first, last := m.layout.Nodes[0], m.layout.Nodes[len(m.layout.Nodes)-1]
-	lo, hi := max(at-step, first), min(at+step, last)
-	for range 60 { // |w|² has one maximum between
-		mid := (lo + hi) / 2
-		re, im := m.value(m.system.velocity, 0, mid)
-		slopeRe, slopeIm := m.value(m.system.velocity, 1, mid)
-		if re*slopeRe+im*slopeIm > 0 {
-			lo = mid
+	return m.climb(at, max(at-step, first), min(at+step, last))
+}
+
+// climb finds the maximum of |w|² between two heights, by Newton's method on
+// its slope as long as that stays between them, else by halving.
+func (m *Mode) climb(z, lo, hi float64) float64 {
+	const maxSteps = 60
+	for range maxSteps {
+		re, im := m.value(m.system.velocity, 0, z)
+		re1, im1 := m.value(m.system.velocity, 1, z)
+		re2, im2 := m.value(m.system.velocity, 2, z)
+		slope := re*re1 + im*im1
+		if slope > 0 {
+			lo = z
 		} else {
-			hi = mid
+			hi = z
 		}
+		next := z - slope/(re1*re1+im1*im1+re*re2+im*im2)
+		if !(next > lo && next < hi) {
+			next = (lo + hi) / 2
+		}
+		if math.Abs(next-z) <= 1e-15*math.Abs(z) {
+			return next
+		}
+		z = next
 	}
-	return (lo + hi) / 2
+	return z
 }
 
 // Wavenumber returns k.

@@ -100,7 +100,7 @@ func (q *question) stationaryMinimum() (answer, error) {
 func (q *question) stationarySearch() *search {
 	c := q.curve(pencil.Marginal)
 	return &search{
-		sample: q.stationary, lower: q.lowerBound,
+		from: q.from, sample: q.stationary, lower: q.lowerBound,
 		extremum: func(at sample, lo, hi float64) (answer, error) {
 			return q.refine(q.still, c, q.point(at.k, at.value), at.level, lo, hi)
 		},

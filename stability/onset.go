@@ -244,7 +244,7 @@ func (q *question) onset(a *answer) Onset {
 
 // oscillatory finds the first oscillatory onset, whatever else comes before.
 func (q *question) oscillatory() (answer, error) {
-	missing := &NoOnsetError{Number: q.number, Wavenumber: [2]float64{leastWavenumber, largestWavenumber}}
+	missing := &NoOnsetError{Number: q.number, Wavenumber: [2]float64{q.from, largestWavenumber}}
 	if !q.oscillates {
 		return answer{}, missing
 	}

@@ -2,6 +2,7 @@ package stability
 
 import (
 	"errors"
+	"fmt"
 	"math"
 
 	"example.org/overturn/stability/internal/pencil"
@@ -59,14 +60,18 @@ func (q *question) oscillationAt(k, limit float64, level int) (sample, float64, 
 	if calm >= limit {
 		return none(k), 0, nil
 	}
-	wild, sigma, err := q.firstOscillation(k, calm, limit, level)
+	still, err := q.stationaryBelow(k, level)
+	if err != nil {
+		return sample{}, 0, err
+	}
+	wild, sigma, err := q.firstOscillation(k, calm, limit, still, level)
 	if err != nil || sigma == 0 {
 		return none(k), 0, err
 	}
 	calm = max(calm, wild/hopfRatio)
 	for wild-calm > hopfWidth*wild {
 		m := (calm + wild) / 2
-		at, err := q.fastestOf(k, m, level, true)
+		at, err := q.fastestOf(k, m, level, m > still)
 		if err != nil {
 			return sample{}, 0, err
 		}
@@ -87,16 +92,37 @@ func (q *question) oscillationAt(k, limit float64, level int) (sample, float64, 
 	return sample{k: k, value: value, omega: imag(s.Sigma), slope: s.Slope, level: level}, lv.tail(), nil
 }
 
+// stationaryBelow returns the stationary neutral value at a wavenumber, or +Inf.
+// Below it, whatever grows has begun as an oscillation, even if its frequency has
+// fallen to zero since.
+func (q *question) stationaryBelow(k float64, level int) (float64, error) {
+	if level > checkLevel {
+		level = checkLevel
+	}
+	values, err := q.still.level(level).work.DriveEigenvalues(q.point(k, 0), driveOf(q.number))
+	if err != nil {
+		return 0, fmt.Errorf("stability: at wavenumber %g: %w", k, err)
+	}
+	if len(values) == 0 {
+		return math.Inf(1), nil
+	}
+	return values[0] * (1 - hopfWidth), nil
+}
+
 // firstOscillation climbs from a value at which nothing grows to one at which
-// an oscillation does.
-func (q *question) firstOscillation(k, calm, limit float64, level int) (float64, complex128, error) {
+// an oscillation does, given the value of the stationary onset.
+func (q *question) firstOscillation(k, calm, limit, still float64, level int) (float64, complex128, error) {
 	value := calm
 	if value == 0 {
 		value = limit / 1e6
 	}
 	for value < limit {
-		value = min(value*hopfRatio, limit)
-		sigma, err := q.fastestOf(k, value, level, true)
+		next := min(value*hopfRatio, limit)
+		if value < still && still < next {
+			next = still // the last value at which any growth tells
+		}
+		value = next
+		sigma, err := q.fastestOf(k, value, level, value > still)
 		if err != nil || sigma != 0 {
 			return value, sigma, err
 		}
@@ -114,6 +140,7 @@ func (q *question) oscillatoryMinimum(limit float64) (answer, error) {
 		return pt
 	}
 	s := &search{
+		from:   q.from,
 		sample: func(k float64) (sample, error) { return q.oscillation(k, limit) },
 		lower: func(k float64) float64 {
 			if b := q.lowerBound(k); !(b > limit) {
@@ -132,7 +159,7 @@ func (q *question) oscillatoryMinimum(limit float64) (answer, error) {
 // wavenumbers lists the grid on which something could grow at a value.
 func (q *question) wavenumbers(value float64) []float64 {
 	var ks []float64
-	for k := leastWavenumber; k < largestWavenumber; k *= gridRatio {
+	for k := q.from; k < largestWavenumber; k *= gridRatio {
 		if q.bound.lower(k, q.number, q.fixed) < value {
 			ks = append(ks, k)
 		}
@@ -188,7 +215,7 @@ func (q *question) first() (answer, error) {
 // nothing has a stationary onset. If there is none it returns the error given.
 func (q *question) valueOfGrowth(missing *NoOnsetError) (float64, error) {
 	least := math.Inf(1)
-	for k := leastWavenumber; k < largestWavenumber; k *= gridRatio {
+	for k := q.from; k < largestWavenumber; k *= gridRatio {
 		if b := q.bound.lower(k, q.number, q.fixed); b > 0 {
 			least = min(least, b)
 		}
@@ -212,13 +239,13 @@ func (q *question) valueOfGrowth(missing *NoOnsetError) (float64, error) {
 // checkCalm returns ErrUnstable if something grows while the number is zero.
 func (q *question) checkCalm() error {
 	suspicious := false
-	for k := leastWavenumber; k < largestWavenumber; k *= gridRatio {
+	for k := q.from; k < largestWavenumber; k *= gridRatio {
 		suspicious = suspicious || q.bound.lower(k, q.number, q.fixed) == 0
 	}
 	if !suspicious {
 		return nil
 	}
-	for k := leastWavenumber; k < largestWavenumber; k *= gridRatio {
+	for k := q.from; k < largestWavenumber; k *= gridRatio {
 		if q.bound.growth(k, q.point(k, 0).Drive) == 0 {
 			continue
 		}

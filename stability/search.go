@@ -11,8 +11,8 @@ const (
 	// gridRatio separates the wavenumbers of a search.
 	gridRatio = 1.25
 
-	// The search stays within these wavenumbers even where no bound says that
-	// there is nothing outside.
+	// A search stays within these wavenumbers even where no bound says that
+	// there is nothing outside, unless the boundaries ask for smaller ones.
 	leastWavenumber   = 1e-3
 	largestWavenumber = 1e3
 
@@ -61,6 +61,7 @@ type search struct {
 	extremum func(guess sample, lo, hi float64) (answer, error)
 	point    func(guess sample) (answer, error)
 
+	from    float64 // smallest wavenumber
 	samples []sample
 }
 
@@ -163,7 +164,7 @@ func (s *search) scan() error {
 			if err != nil {
 				return err
 			}
-			downDone = down < leastWavenumber || s.nothingBeyond(at, best, at.slope < 0)
+			downDone = down < s.from || s.nothingBeyond(at, best, at.slope < 0)
 		}
 	}
 	slices.SortFunc(s.samples, func(a, b sample) int {
@@ -201,12 +202,12 @@ func (s *search) nothingBeyond(at sample, best float64, rising bool) bool {
 func (s *search) centre() float64 {
 	const start, step = 3, 1.3
 	at, least := float64(start), math.Inf(1)
-	for k := leastWavenumber; k < largestWavenumber; k *= step {
+	for k := s.from; k < largestWavenumber; k *= step {
 		if b := s.lower(k); !math.IsInf(b, -1) && b < least {
 			at, least = k, b
 		}
 	}
-	return max(at, 10*leastWavenumber)
+	return max(at, 10*s.from)
 }
 
 func (s *search) smallest() float64 {

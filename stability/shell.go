@@ -202,7 +202,7 @@ func (s Shell) question() (*question, error) {
 		return nil, err
 	}
 	scale := 1 / math.Sqrt(max(1, b.lower(wavenumberOfDegree(2), ThermalRayleigh, [3]float64{})))
-	e := &engine{bound: b, diffuses: true, tolerance: DefaultTolerance, maxUnknowns: DefaultMaxUnknowns}
+	e := &engine{bound: b, diffuses: true, from: leastWavenumber, tolerance: DefaultTolerance, maxUnknowns: DefaultMaxUnknowns}
 	e.still = &ladder{system: s.system(true, scale, nodes, degree)}
 	e.moving = &ladder{system: s.system(false, scale, nodes, degree)}
 	return &question{engine: e, number: ThermalRayleigh}, nil

@@ -82,12 +82,12 @@ func NewSolver(l Layer, settings *Settings) (*Solver, error) {
 	moving := layerSystem(&l, s.base, eta, false, scale)
 	s.engine = engine{
 		still: &ladder{system: still}, moving: &ladder{system: moving},
-		bound: &s.bound, diffuses: true,
+		bound: &s.bound, diffuses: true, from: s.leastWavenumber(),
 		tolerance: set.Tolerance, maxUnknowns: set.MaxUnknowns,
 	}
 	s.engine.bottomless = still.unlimited && s.base.resolved.FromRight().At(0) > 0
 	for i, f := range still.fields {
-		if f.Weighted && (i == still.temperature || i == still.solute || i == still.velocity) {
+		if f.Weighted && !still.irregular && (i == still.temperature || i == still.solute || i == still.velocity) {
 			s.engine.longWave = true
 		}
 	}
@@ -109,6 +109,16 @@ func (s *Solver) mayOscillate(number Number, drive [3]float64) bool {
 		return false
 	}
 	return l.Taylor > 0 && l.inertia() > 0 || l.Magnetic.induction() > 0
+}
+
+// leastWavenumber returns where a search ends. Boundaries of nearly fixed flux
+// have their onset at k of the order of the fourth root of the Biot number.
+func (s *Solver) leastWavenumber() float64 {
+	const share = 0.05
+	if s.bound.thermal > 0 {
+		return min(leastWavenumber, share*math.Sqrt(math.Sqrt(s.bound.thermal)))
+	}
+	return leastWavenumber
 }
 
 // unknownScale makes the temperature unknown about as large as the velocity

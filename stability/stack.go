@@ -160,7 +160,7 @@ func (s Stack) engine() (*engine, stackScales, error) {
 	}
 	e := &engine{
 		moving: &ladder{system: sys}, bound: b,
-		tolerance: DefaultTolerance, maxUnknowns: DefaultMaxUnknowns,
+		from: leastWavenumber, tolerance: DefaultTolerance, maxUnknowns: DefaultMaxUnknowns,
 	}
 	return e, u, nil
 }

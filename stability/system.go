@@ -30,6 +30,7 @@ type system struct {
 
 	rotationRoot float64 // √Ta
 	unlimited    bool    // nothing limits velocity and temperature as k → 0
+	irregular    bool    // singular at k = 0
 
 	// scale multiplies the solution for θ̂ and ŝ, so that w and they are of
 	// the same size near onset.
@@ -296,19 +297,31 @@ func (s *system) magnetic(l *Layer, still bool) {
 		s.addInduction(walls, root, q)
 	}
 	if s.vorticity >= 0 {
-		f := element.Field{Class: element.C0}
-		for i, wall := range walls {
-			if wall == Insulating {
-				f.Fixed[i] = 1
-			}
-		}
-		f.Constant = f.Fixed == [2]int{}
-		f.Weighted = still && f.Constant
-		s.current = s.field(f)
-		s.diffusion(s.current, 0, 1, q)
-		s.add(integral{pencil.Base, 0, s.vorticity, s.current, 0}, 0, 1, -root)
-		s.add(integral{pencil.Base, 0, s.current, s.vorticity, 0}, 0, 1, -root)
+		s.addCurrent(walls, root, q)
 	}
+}
+
+// addCurrent adds the field j. Between walls without current through them the
+// derivative can be on ζ, where a constant makes it exactly zero; else the limit
+// k → 0 is out of reach.
+func (s *system) addCurrent(walls [2]MagneticWall, root, q float64) {
+	f := element.Field{Class: element.C0}
+	for i, wall := range walls {
+		if wall != Conducting {
+			f.Fixed[i] = 1
+		}
+	}
+	f.Constant = f.Fixed == [2]int{}
+	s.current = s.field(f)
+	s.diffusion(s.current, 0, 1, q)
+	if f.Fixed == [2]int{1, 1} {
+		s.add(integral{pencil.Base, 0, s.vorticity, s.current, 0}, 1, 0, root)
+	} else {
+		s.add(integral{pencil.Base, 0, s.vorticity, s.current, 0}, 0, 1, -root)
+		s.fields[s.vorticity].Weighted = false
+		s.irregular = true
+	}
+	s.add(integral{pencil.Base, 0, s.current, s.vorticity, 0}, 0, 1, -root)
 }
 
 // addInduction adds the field b. Outside an insulating wall it decays like
@@ -323,8 +336,8 @@ func (s *system) addInduction(walls [2]MagneticWall, root, q float64) {
 	s.induced = s.field(f)
 	b := s.induced
 	s.diffusion(b, 0, 1, q)
-	for end, fixed := range f.Fixed {
-		if fixed == 0 {
+	for end, wall := range walls {
+		if wall == Insulating {
 			s.addEnd(integral{pencil.Base, 1, b, b, 0}, end, 0, 0, 1)
 		}
 	}

@@ -1,9 +1,10 @@
 package pencil
 
 import (
+	"cmp"
 	"errors"
 	"math"
-	"sort"
+	"slices"
 
 	"gonum.org/v1/gonum/blas"
 	"gonum.org/v1/gonum/blas/blas64"
@@ -20,7 +21,7 @@ var ErrSingular = errors.New("pencil: singular matrix")
 type eigenspace struct {
 	matrix, inverse []float64
 	reduced         []float64
-	mass            []float64
+	factor, similar []float64
 	pivot           []int
 	where           []int // unknowns that the reduced problem keeps
 	place           []int // of an unknown in where, -1 for none
@@ -50,7 +51,7 @@ func (w *Workspace) rowsOf(part int) {
 			}
 		}
 	}
-	sort.Ints(s.where)
+	slices.Sort(s.where)
 	for i, r := range s.where {
 		s.place[r] = i
 	}
@@ -105,20 +106,71 @@ func (w *Workspace) reduce(part int, k float64) {
 	}
 }
 
+// symmetricAlike is the asymmetry, relative to the largest element, up to which
+// a matrix is taken for symmetric.
+const symmetricAlike = 1e-12
+
+// symmetrise tries to make the reduced matrix symmetric by a similarity
+// transformation. With G the inverse of J in the kept unknowns, the reduced
+// matrix is C = B G, or a product that acts like it; if the problem is
+// self-adjoint, G = UᵀU is positive definite and U C U⁻¹ symmetric.
+func (w *Workspace) symmetrise() bool {
+	s, m := &w.eigen, len(w.eigen.where)
+	s.factor, s.similar = resize(s.factor, m*m), resize(s.similar, m*m)
+	for i, r := range s.where {
+		copy(s.factor[i*m:(i+1)*m], s.inverse[r*m:(r+1)*m])
+	}
+	if !alike(s.factor, m) {
+		return false
+	}
+	u, ok := lapack64.Potrf(blas64.Symmetric{N: m, Stride: m, Data: s.factor, Uplo: blas.Upper})
+	if !ok {
+		return false
+	}
+	copy(s.similar, s.reduced)
+	c := blas64.General{Rows: m, Cols: m, Stride: m, Data: s.similar}
+	blas64.Trmm(blas.Left, blas.NoTrans, 1, u, c)
+	blas64.Trsm(blas.Right, blas.NoTrans, 1, u, c)
+	return alike(s.similar, m)
+}
+
+// alike reports whether a matrix of order m is symmetric but for round-off.
+func alike(a []float64, m int) bool {
+	largest, difference := 0.0, 0.0
+	for i := range m {
+		for j := range i + 1 {
+			largest = max(largest, math.Abs(a[i*m+j]))
+			difference = max(difference, math.Abs(a[i*m+j]-a[j*m+i]))
+		}
+	}
+	return difference <= symmetricAlike*largest
+}
+
 // eigenvalues returns the eigenvalues of the reduced matrix, which it destroys.
 func (w *Workspace) eigenvalues() ([]complex128, error) {
 	s, m := &w.eigen, len(w.eigen.where)
+	if m == 0 {
+		return nil, nil
+	}
 	s.wr, s.wi = resize(s.wr, m), resize(s.wi, m)
 	for _, v := range s.reduced {
 		if math.IsNaN(v) || math.IsInf(v, 0) {
 			return nil, ErrSingular
 		}
 	}
-	s.work = resize(s.work, max(64*m, 4))
-	a := blas64.General{Rows: m, Cols: m, Stride: max(m, 1), Data: s.reduced}
-	none := blas64.General{Stride: 1}
-	if lapack64.Geev(lapack.LeftEVNone, lapack.RightEVNone, a, s.wr, s.wi, none, none, s.work, len(s.work)) != 0 {
-		return nil, ErrSingular
+	s.work = resize(s.work, 64*m)
+	if w.symmetrise() {
+		clear(s.wi)
+		a := blas64.Symmetric{N: m, Stride: m, Data: s.similar, Uplo: blas.Upper}
+		if !lapack64.Syev(lapack.EVNone, a, s.wr, s.work, len(s.work)) {
+			return nil, ErrSingular
+		}
+	} else {
+		a := blas64.General{Rows: m, Cols: m, Stride: m, Data: s.reduced}
+		none := blas64.General{Stride: 1}
+		if lapack64.Geev(lapack.LeftEVNone, lapack.RightEVNone, a, s.wr, s.wi, none, none, s.work, len(s.work)) != 0 {
+			return nil, ErrSingular
+		}
 	}
 	s.found = s.found[:0]
 	for i, re := range s.wr {
@@ -156,7 +208,7 @@ func (w *Workspace) DriveEigenvalues(pt Point, drive int) ([]float64, error) {
 			values = append(values, -1/real(mu))
 		}
 	}
-	sort.Float64s(values)
+	slices.Sort(values)
 	return values, nil
 }
 
@@ -179,11 +231,8 @@ func (w *Workspace) GrowthEigenvalues(pt Point) ([]complex128, error) {
 			values = append(values, pt.Sigma+1/mu)
 		}
 	}
-	sort.SliceStable(values, func(i, j int) bool {
-		if real(values[i]) != real(values[j]) {
-			return real(values[i]) > real(values[j])
-		}
-		return imag(values[i]) > imag(values[j])
+	slices.SortStableFunc(values, func(a, b complex128) int {
+		return cmp.Or(cmp.Compare(real(b), real(a)), cmp.Compare(imag(b), imag(a)))
 	})
 	return values, nil
 }
@@ -199,8 +248,7 @@ func (w *Workspace) SolveLinear(pt Point, b []float64) ([]float64, error) {
 	x := make([]float64, n)
 	copy(x, b)
 	w.p.Unscale(x) // J is D J₀ D with D the scale
-	lapack64.Getrs(blas.NoTrans, blas64.General{Rows: n, Cols: n, Stride: n, Data: w.eigen.matrix},
-		blas64.General{Rows: n, Cols: 1, Stride: 1, Data: x}, w.eigen.pivot)
+	luSolve(blas64.General{Rows: n, Cols: n, Stride: n, Data: w.eigen.matrix}, w.eigen.pivot, x)
 	w.p.Unscale(x)
 	return x, nil
 }
@@ -228,7 +276,7 @@ func (w *Workspace) SlowestDecay(k float64) float64 {
 		w.apply(w.x, w.c, mass, k, 0)
 		before := floats.Dot(w.x[:n], w.c[:n])
 		copy(w.y[:n], w.x[:n])
-		lapack64.Getrs(blas.NoTrans, lu, blas64.General{Rows: n, Cols: 1, Stride: 1, Data: w.y[:n]}, w.eigen.pivot)
+		luSolve(lu, w.eigen.pivot, w.y[:n])
 		lambda := before / floats.Dot(w.x[:n], w.y[:n])
 		copy(w.c, w.y)
 		w.normalise(w.c)

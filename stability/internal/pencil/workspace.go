@@ -164,7 +164,7 @@ func (w *Workspace) apply(dst, x []float64, c [parts]complex128, k float64, d in
 
 // solve overwrites v with the solution of the bordered system.
 func (w *Workspace) solve(v []float64) {
-	lapack64.Getrs(blas.NoTrans, w.matrix(), blas64.General{Rows: w.order, Cols: 1, Stride: 1, Data: v}, w.pivot)
+	luSolve(w.matrix(), w.pivot, v)
 }
 
 // solveTransposed does it for the transposed (not conjugate) system.
@@ -172,10 +172,35 @@ func (w *Workspace) solveTransposed(v []float64) {
 	if w.complex {
 		floats.Scale(-1, v[w.n:])
 	}
-	lapack64.Getrs(blas.Trans, w.matrix(), blas64.General{Rows: w.order, Cols: 1, Stride: 1, Data: v}, w.pivot)
+	luSolveTransposed(w.matrix(), w.pivot, v)
 	if w.complex {
 		floats.Scale(-1, v[w.n:])
 	}
+}
+
+// luSolve solves for one right-hand side, faster than Getrs does, which is made
+// for many.
+func luSolve(lu blas64.General, pivot []int, v []float64) {
+	for i, p := range pivot {
+		v[i], v[p] = v[p], v[i]
+	}
+	x := blas64.Vector{N: lu.Rows, Inc: 1, Data: v}
+	blas64.Trsv(blas.NoTrans, triangle(lu, blas.Lower, blas.Unit), x)
+	blas64.Trsv(blas.NoTrans, triangle(lu, blas.Upper, blas.NonUnit), x)
+}
+
+func luSolveTransposed(lu blas64.General, pivot []int, v []float64) {
+	x := blas64.Vector{N: lu.Rows, Inc: 1, Data: v}
+	blas64.Trsv(blas.Trans, triangle(lu, blas.Upper, blas.NonUnit), x)
+	blas64.Trsv(blas.Trans, triangle(lu, blas.Lower, blas.Unit), x)
+	for i := len(pivot) - 1; i >= 0; i-- {
+		p := pivot[i]
+		v[i], v[p] = v[p], v[i]
+	}
+}
+
+func triangle(lu blas64.General, uplo blas.Uplo, diag blas.Diag) blas64.Triangular {
+	return blas64.Triangular{N: lu.Rows, Stride: lu.Stride, Data: lu.Data, Uplo: uplo, Diag: diag}
 }
 
 // null solves for x, y and g at the point of the last factor.

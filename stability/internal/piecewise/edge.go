@@ -12,9 +12,11 @@ const (
 	jumpKept = 0.5
 	kinkKept = 0.3
 
-	// A kink is located to this part of the interval; closer in, the second
-	// differences drown in round-off.
-	kinkWidth = 1e-7
+	// A kink is located to this part of the interval by second differences;
+	// closer in, they drown in round-off. Extrapolation from both sides, over
+	// so many times the distance, then does the rest.
+	kinkWidth = 1e-6
+	kinkReach = 20
 )
 
 // findEdge looks for a jump, then for a kink of f between a and b.
@@ -71,9 +73,33 @@ func findKink(f func(float64) float64, a, b float64) (float64, bool) {
 		middle := a + float64(at)*h
 		a, b = middle-h, middle+h
 		if b-a <= kinkWidth*width {
-			return middle, true
+			return meet(f, middle, kinkReach*(b-a)), true
 		}
 	}
+}
+
+// meet returns where the parabolas through three points on each side of a kink
+// near z meet; the points are at multiples of h from z.
+func meet(f func(float64) float64, z, h float64) float64 {
+	var c [2][3]float64 // value, slope and curvature at z, in units of h
+	for side, s := range []float64{-1, 1} {
+		f1, f2, f3 := f(z+s*h), f(z+2*s*h), f(z+3*s*h)
+		bend := f1 - 2*f2 + f3
+		c[side] = [3]float64{3*f1 - 3*f2 + f3, s * (-2.5*f1 + 4*f2 - 1.5*f3), bend}
+	}
+	t := 0.0
+	for range 4 { // Newton's method on the difference
+		gap := c[1][0] - c[0][0] + t*(c[1][1]-c[0][1]+t*(c[1][2]-c[0][2])/2)
+		slope := c[1][1] - c[0][1] + t*(c[1][2]-c[0][2])
+		if slope == 0 {
+			break
+		}
+		t -= gap / slope
+	}
+	if !(math.Abs(t) < 1) {
+		return z
+	}
+	return z + t*h
 }
 
 // largestBend returns the inner grid point where the slope of f changes most.

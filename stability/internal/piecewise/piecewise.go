@@ -73,13 +73,31 @@ type resolver struct {
 	f       func(float64) float64
 	scale   Scale
 	largest float64 // absolute value seen so far
+	edges   []float64
 	out     Function
 }
 
+// maxRestarts bounds how often new edges may start the work afresh.
+const maxRestarts = 8
+
 // Resolve represents f on an interval. Breaks inside it are taken as ends of
-// panels; they may come in any order.
+// panels; they may come in any order. Jumps and kinks that are found become
+// breaks, too, and the panels that were halved in search of them are given up.
 func Resolve(f func(float64) float64, lo, hi float64, breaks []float64, scale Scale) (*Function, error) {
-	r := &resolver{f: f, scale: scale}
+	breaks = slices.Clone(breaks)
+	for restart := 0; ; restart++ {
+		r := &resolver{f: f, scale: scale}
+		if err := r.resolve(lo, hi, breaks); err != nil {
+			return nil, err
+		}
+		if len(r.edges) == 0 || restart == maxRestarts {
+			return &r.out, nil
+		}
+		breaks = append(breaks, r.edges...)
+	}
+}
+
+func (r *resolver) resolve(lo, hi float64, breaks []float64) error {
 	ends := []float64{lo, hi}
 	for _, b := range breaks {
 		if b > lo && b < hi {
@@ -90,16 +108,16 @@ func Resolve(f func(float64) float64, lo, hi float64, breaks []float64, scale Sc
 	ends = slices.Compact(ends)
 	for _, z := range ends { // a first idea of the largest value
 		if err := r.see(z); err != nil {
-			return nil, err
+			return err
 		}
 	}
 	r.out.Nodes = append(r.out.Nodes, lo)
 	for i := range len(ends) - 1 {
 		if err := r.panel(ends[i], ends[i+1], 0); err != nil {
-			return nil, err
+			return err
 		}
 	}
-	return &r.out, nil
+	return nil
 }
 
 func (r *resolver) see(z float64) error {
@@ -134,8 +152,9 @@ func (r *resolver) panel(a, b float64, depth int) error {
 	}
 	middle := (a + b) / 2
 	if depth >= edgeDepth {
-		if edge, ok := findEdge(r.f, a, b); ok {
+		if edge, ok := findEdge(r.f, a, b); ok && edge > a && edge < b {
 			middle = edge
+			r.edges = append(r.edges, edge)
 		}
 	}
 	if middle <= a || middle >= b {

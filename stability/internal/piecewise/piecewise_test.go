@@ -79,7 +79,7 @@ func TestJumpsAndKinksAreFound(t *testing.T) {
 		name string
 		f    func(float64) float64
 		tol  float64
-	}{{"jump", jump, 1e-15}, {"kink", kink, 1e-7}} {
+	}{{"jump", jump, 1e-15}, {"kink", kink, 1e-12}} {
 		r := resolve(t, tt.f, Global)
 		nearest := math.Inf(1)
 		for _, z := range r.Nodes {
