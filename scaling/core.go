@@ -40,10 +40,9 @@ const (
 // circulation is a core flow of unit amplitude in a cell of width a and depth
 // one: ∫|u| over a plate, ∫|w| over a plume, mean squares of vorticity and speed.
 type circulation struct {
-	plate, plume  float64
-	dissipation   float64 // ⟨ω²⟩
-	kinetic       float64 // ⟨|u|²⟩
-	maxPlumeSpeed float64 // zero where unknown
+	plate, plume float64
+	dissipation  float64 // ⟨ω²⟩
+	kinetic      float64 // ⟨|u|²⟩
 }
 
 // circulation returns the core flow; the viscous one is expensive and is

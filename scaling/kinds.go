@@ -17,6 +17,7 @@ const (
 	ViscosityContrast          // that separates two regimes
 )
 
+// String returns the name of the quantity.
 func (q Quantity) String() string {
 	return name(int(q), "any quantity", "Nusselt number", "Reynolds number", "Péclet number",
 		"mean temperature", "temperature in H d²/k", "critical Rayleigh number", "viscosity contrast")
@@ -38,6 +39,7 @@ const (
 	PlateFacingDown
 )
 
+// String returns the name of the geometry.
 func (g Geometry) String() string {
 	return name(int(g), "any geometry", "horizontal layer", "inclined layer", "porous layer", "side-heated slot",
 		"vertical plate", "horizontal cylinder", "hot plate facing up", "hot plate facing down")
@@ -55,6 +57,7 @@ const (
 	FreeOverRigid       // one of each
 )
 
+// String returns the name of the walls.
 func (w Walls) String() string {
 	return name(int(w), "any walls", "free walls", "rigid walls", "one free, one rigid wall")
 }
@@ -71,6 +74,7 @@ const (
 	FromSide // horizontal temperature difference, or a single hot surface
 )
 
+// String returns the name of the mode of heating.
 func (h Heating) String() string {
 	return name(int(h), "any heating", "heated from below", "heated from within", "mixed heating", "heated from the side")
 }
@@ -88,6 +92,7 @@ const (
 	PorousMedium                // Darcy's law
 )
 
+// String returns the name of the rheology.
 func (r Rheology) String() string {
 	return name(int(r), "any rheology", "constant viscosity", "thermally activated viscosity", "stress-dependent viscosity",
 		"yielding lid", "porous medium")
@@ -103,6 +108,7 @@ const (
 	TimeDependent // including turbulent
 )
 
+// String returns the name of the kind of flow.
 func (f Flow) String() string {
 	return name(int(f), "any flow", "steady", "time dependent")
 }
@@ -121,6 +127,7 @@ const (
 	NotConfirmed               // remembered, contradicted or doubtful: do not rely on it
 )
 
+// String returns the name of the status.
 func (s Status) String() string {
 	return name(int(s), "derived here", "read in the source", "read in the abstract", "read in a secondary source",
 		"from memory", "not confirmed")

@@ -157,6 +157,7 @@ func growHead(q, e, t float64) (volume, rise float64, err error) {
 // headGrowth is the growth of a plume head in x = ln τ and y = ln w.
 type headGrowth struct{}
 
+// Rates implements the system to integrate.
 func (headGrowth) Rates(dst, y []float64, x float64) {
 	tau := math.Exp(x)
 	dst[0] = math.Exp(x-y[0]) + math.Exp(1.5*x-2./3*y[0])

@@ -80,6 +80,7 @@ type SampleError struct {
 	Err             error     // what it returned
 }
 
+// Error counts the failures and describes the first.
 func (e *SampleError) Error() string {
 	return fmt.Sprintf("uncertainty: %v: %d of %d, first sample %d with inputs %.6g: %v", ErrFailed, e.Failed, e.Samples, e.Sample, e.Inputs, e.Err)
 }

@@ -28,6 +28,7 @@ type StepError struct {
 	Err        error
 }
 
+// Error says what stopped the integration, and when.
 func (e *StepError) Error() string {
 	return fmt.Sprintf("%v at time %.6g (last step %.2g)", e.Err, e.Time, e.Step)
 }
@@ -54,19 +55,18 @@ type Solver struct {
 	f         []float64 // rates at t: n derivatives, m integrands
 	rejected  bool
 
-	jac       []float64 // n×n
-	lu        []float64 // stages·n square
-	perm      []int
-	filter    []float64 // n×n: 1 - h·dense·J
-	filterP   []int
-	z, dz     []float64 // stages·n: increments of the stages
-	rates     []float64 // stages·(n+m)
-	stage     []float64
-	rate2     []float64
-	work      []float64
-	newtonErr float64
-	lastErr   float64
-	lastStep  float64
+	jac      []float64 // n×n
+	lu       []float64 // stages·n square
+	perm     []int
+	filter   []float64 // n×n: 1 - h·dense·J
+	filterP  []int
+	z, dz    []float64 // stages·n: increments of the stages
+	rates    []float64 // stages·(n+m)
+	stage    []float64
+	rate2    []float64
+	work     []float64
+	lastErr  float64
+	lastStep float64
 
 	// Counts of work since Start.
 	Steps, Rejections, Evaluations int
