@@ -39,11 +39,14 @@ type motion struct {
 
 // MoveWalls lets the values of the walls go from what they are to those of w
 // during the next [Stepper.Step], at a constant speed, so that conditions that
-// change in time keep the temperature at second order. (Under [Implicit] the flux
-// through a wall whose temperature changes is of first order if the step is
-// refined in proportion to the cells.) The kinds of the walls and
+// change in time keep the temperature at second order. The kinds of the walls and
 // their coefficients of heat transfer must stay the same. When the step fails
 // the motion is still to come.
+//
+// Under [Implicit] the flux through a wall whose temperature changes is of first
+// order if the step is refined in proportion to the cells, and so is the
+// temperature beside a side wall whose parts change at different speeds: take
+// shorter steps or an explicit scheme there.
 func (st *Stepper) MoveWalls(w Walls) error {
 	if err := w.check(); err != nil {
 		return err
