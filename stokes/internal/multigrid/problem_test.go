@@ -44,7 +44,7 @@ func newProblem(b box, eta func(x, z float64) float64) *problem {
 	p := &problem{sv: NewSolver(x, z, team.New(max(1, b.workers))), x: nodes(b.hx), z: nodes(b.hz)}
 	p.fx = func(x, z float64) float64 { return 0 }
 	p.fz = func(x, z float64) float64 {
-		return math.Cos(math.Pi*x/p.x[x_last(p.x)]) * math.Sin(math.Pi*z/p.z[x_last(p.z)])
+		return math.Cos(math.Pi*x/last(p.x)) * math.Sin(math.Pi*z/last(p.z))
 	}
 	l := p.sv.Finest()
 	for j := 1; j <= z.N; j++ {
@@ -68,7 +68,7 @@ func newProblem(b box, eta func(x, z float64) float64) *problem {
 	return p
 }
 
-func x_last(s []float64) int { return len(s) - 1 }
+func last(s []float64) float64 { return s[len(s)-1] }
 
 func (p *problem) AddRow(j int, fx, fz, g []float64) {
 	l := p.sv.Finest()
@@ -89,24 +89,6 @@ func (p *problem) solve(t testing.TB) (int, Norms) {
 	norms.Weighted /= rest.Weighted
 	norms.Momentum /= rest.Momentum
 	return n, norms
-}
-
-var loads = []struct {
-	name string
-	eta  func(x, z float64) float64
-}{
-	{"a", func(x, z float64) float64 { return 1 }},
-	{"b3", exponential(1e3)},
-	{"b6", exponential(1e6)},
-	{"b8", exponential(1e8)},
-	{"b10", exponential(1e10)},
-	{"c6", jump(1e6, 0.5)},
-	{"c6-off", jump(1e6, 0.53)},
-	{"e4", func(x, z float64) float64 { return 1 + 9999*float64(int(z*3)&1) }},
-	{"d3", circles(1e3)},
-	{"d-3", circles(1e-3)},
-	{"d4", circles(1e4)},
-	{"d6", circles(1e6)},
 }
 
 func exponential(contrast float64) func(x, z float64) float64 {

@@ -47,9 +47,9 @@ type Solver struct {
 }
 
 // The basis starts with room for shortBasis directions. When they are used up
-// without the residual having fallen by goodProgress, the basis grows instead
-// of starting anew: near rigid bodies a restart on a plateau is the end of
-// convergence.
+// without the residual having fallen by goodProgress, the basis grows, and goes
+// on growing, instead of starting anew: near rigid bodies a restart on a
+// plateau is the end of convergence.
 const (
 	shortBasis   = 5
 	goodProgress = 0.03
@@ -178,18 +178,17 @@ func (sv *Solver) Solve(ctx context.Context, load Load, lim Limits) (Norms, int,
 // residual of size start.
 func (sv *Solver) round(ctx context.Context, lim Limits, done int, start float64) (int, error) {
 	sv.k = 0
-	residual, mark := start, start
+	residual := start
 	n := 0
 	for done+n < lim.Iterations && residual > lim.Target {
 		if err := ctx.Err(); err != nil {
 			return n, err
 		}
 		if sv.k == len(sv.z) {
-			if residual < goodProgress*mark || len(sv.z) >= lim.Basis {
+			if residual < goodProgress*start && len(sv.z) <= shortBasis || len(sv.z) >= lim.Basis {
 				return n, nil
 			}
 			sv.grow(min(lim.Basis, 2*len(sv.z)))
-			mark = residual
 		}
 		next, ok := sv.iterate()
 		if !ok {
