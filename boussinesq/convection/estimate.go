@@ -39,6 +39,10 @@ func (e Estimate) String() string {
 // extrapolation to be believed.
 const orderWindow = 0.5
 
+// disbelief is the share of an extrapolation that is always counted as
+// uncertain: the terms of its series may cancel on three grids by chance.
+const disbelief = 0.02
+
 // safety is the factor on the error estimated without three grids in the
 // asymptotic range: that of the grid convergence index (Roache 1994, from
 // memory).
@@ -52,11 +56,12 @@ const safety = 3
 // With three grids or more, and an observed order within 0.5 of 2, the terms in
 // h² and h⁴ are removed by the finest three, and the uncertainty is the change
 // against removing by the finest two h² alone, or a term of the observed order,
-// whichever is larger. With two grids only h² is removed and the uncertainty is
-// the whole step from the finest value. Where the order is off, nothing is
-// removed and the uncertainty is three times the step that Richardson
-// extrapolation of order min(order, 2) would make, or three times the range of
-// the last values where they do not converge at all.
+// whichever is larger, but not less than a fiftieth of the whole extrapolation.
+// With two grids only h² is removed and the uncertainty is the whole step from
+// the finest value. Where the order is off, nothing is removed and the
+// uncertainty is three times the step that Richardson extrapolation of order
+// min(order, 2) would make, or three times the range of the last values where
+// they do not converge at all.
 func Extrapolate(h, values []float64) (Estimate, error) {
 	if err := checkSequence(h, values); err != nil {
 		return Estimate{}, err
@@ -81,7 +86,7 @@ func Extrapolate(h, values []float64) (Estimate, error) {
 		e.Uncertainty = math.Abs(e.Value - fine)
 		if !math.IsNaN(e.Order) {
 			asObserved := richardson(h[1], h[2], values[1], values[2], e.Order)
-			e.Uncertainty = max(e.Uncertainty, math.Abs(e.Value-asObserved))
+			e.Uncertainty = max(e.Uncertainty, math.Abs(e.Value-asObserved), disbelief*math.Abs(e.Value-finest))
 		}
 	case math.IsNaN(e.Order):
 		e.Value = finest

@@ -1,0 +1,157 @@
+// Command iceshell takes the warm lower part of an ice shell, under a cold lid,
+// from a material in real units to a verified convecting layer: Rayleigh number
+// with its range, onset, a run, and the results in units that an observer knows.
+// Ithyra, the moon that wears the shell, is invented.
+//
+//	go run ./examples/iceshell
+//
+// Numbers go to standard output, the temperature as a picture and as a VTK file
+// into the folder of -out.
+package main
+
+import (
+	"context"
+	"flag"
+	"fmt"
+	"os"
+	"os/signal"
+	"strings"
+
+	"example.org/overturn/boussinesq"
+	"example.org/overturn/boussinesq/convection"
+	"example.org/overturn/heat"
+	"example.org/overturn/stokes/rheology"
+	"example.org/overturn/stokes/staggered"
+	"example.org/overturn/units"
+)
+
+// activationEnergy of ice creep at these temperatures, of the order of the 49 to
+// 60 kJ/mol of Goldsby & Kohlstedt (2001, from memory).
+const activationEnergy = 55 * units.KilojoulePerMole
+
+// ithyra is what is known of the shell, and how well.
+var ithyra = boussinesq.Uncertain{
+	Layer: boussinesq.Layer{
+		Material: boussinesq.Material{
+			Name:         "warm ice",
+			Density:      920 * units.KilogramPerCubicMetre,
+			Expansivity:  1.55e-4 * units.PerKelvin,
+			Conductivity: 2.4 * units.WattPerMetreKelvin,
+			SpecificHeat: 1950 * units.JoulePerKilogramKelvin,
+			Viscosity:    1e14 * units.PascalSecond,
+
+			ReferenceTemperature: units.Temperature(254),
+		},
+		Depth:   17 * units.Kilometre,
+		Gravity: 0.9 * units.MetrePerSecondSquared,
+		Top:     units.Temperature(240),
+		Bottom:  units.Temperature(268),
+	},
+	Ranges: boussinesq.Ranges{
+		Viscosity:    boussinesq.Decades(1e13*units.PascalSecond, 1e17*units.PascalSecond),
+		Depth:        boussinesq.Between(13*units.Kilometre, 21*units.Kilometre),
+		Conductivity: boussinesq.Between(2.2*units.WattPerMetreKelvin, 2.6*units.WattPerMetreKelvin),
+	},
+}
+
+func main() {
+	out := flag.String("out", "examples/iceshell/out", "folder for the picture and the field")
+	flag.Parse()
+	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt)
+	defer stop()
+	if err := run(ctx, *out); err != nil {
+		fmt.Fprintln(os.Stderr, "iceshell:", err)
+		os.Exit(1)
+	}
+}
+
+func run(ctx context.Context, out string) error {
+	if err := beforehand(); err != nil {
+		return err
+	}
+	model, mean, err := simulate(ctx)
+	if err != nil {
+		return err
+	}
+	if err := report(mean); err != nil {
+		return err
+	}
+	return save(out, model)
+}
+
+// beforehand says what can be said without a run.
+func beforehand() error {
+	l := ithyra.Layer
+	fmt.Printf("Ice shell of Ithyra: %.0f km of warm ice between %v and %v\n\n", l.Depth.In(units.Kilometre), l.Top, l.Bottom)
+	ra, err := ithyra.Bounds(boussinesq.Layer.Rayleigh)
+	if err != nil {
+		return err
+	}
+	sample, err := ithyra.Sample(boussinesq.Layer.Rayleigh, nil)
+	if err != nil {
+		return err
+	}
+	fmt.Printf("Rayleigh number %.2g, from %.2g to %.2g; what matters most is the %s\n",
+		ra.Best, ra.Low, ra.High, strings.ToLower(sample.Influences()[0].Parameter))
+	for _, walls := range onsets {
+		fmt.Printf("  between %-9s walls it convects above %6.1f: probability %.0f %%\n",
+			walls.name, walls.critical, 100*sample.Above(walls.critical))
+	}
+	criteria, err := ithyra.Layer.Validity()
+	if err != nil {
+		return err
+	}
+	for _, c := range criteria {
+		if c.Verdict == boussinesq.Strained {
+			fmt.Printf("  note: %s\n", c.Sentence)
+		}
+	}
+	return nil
+}
+
+// onsets are critical Rayleigh numbers of uniform viscosity.
+var onsets = []struct {
+	name     string
+	critical float64
+}{
+	{"free-slip", 657.511}, // 27π⁴/4, Rayleigh (1916)
+	{"no-slip", 1707.762},  // Chandrasekhar (1961, ch. II), from memory
+}
+
+// simulate runs the best values until heat flow and speed have settled, and
+// returns their means over the second half of the run.
+func simulate(ctx context.Context) (*convection.Model, averages, error) {
+	g, err := staggered.Uniform(96, 48, 2, 1)
+	if err != nil {
+		return nil, averages{}, err
+	}
+	p, err := convection.FromLayer(ithyra.Layer, g)
+	if err != nil {
+		return nil, averages{}, err
+	}
+	contrast, err := ithyra.Layer.FrankKamenetskii(activationEnergy, ithyra.Layer.Material.ReferenceTemperature)
+	if err != nil {
+		return nil, averages{}, err
+	}
+	// The viscosity of the material is that in the middle of the range.
+	p.Viscosity = rheology.FrankKamenetskii{ThermalExponent: contrast, ReferenceTemperature: 0.5}
+	const end = 0.12
+	m, err := convection.New(p, &convection.Settings{
+		EndTime: end, Courant: 0.9, Every: 10, Heat: &heat.Settings{Advection: heat.Bounded},
+	})
+	if err != nil {
+		return nil, averages{}, err
+	}
+	var mean averages
+	watch := progress()
+	for s, err := range m.Steps(ctx) {
+		if err != nil {
+			return nil, mean, err
+		}
+		if s.Time > end/2 {
+			mean.add(s)
+		}
+		watch(s.Time / end)
+	}
+	return m, mean, nil
+}
