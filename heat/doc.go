@@ -71,6 +71,6 @@
 // Two dimensions. Coefficients do not depend on temperature within a step.
 // [Implicit] is stable for conduction at any step but damps little of what is
 // rough in both directions at steps far beyond the explicit limit, and keeps no
-// bounds there. A step of the explicit schemes beyond [Stepper.StableStep] is an
+// bounds there. A factored operator takes about 0.7 kB per cell. A step of the explicit schemes beyond [Stepper.StableStep] is an
 // error unless [Settings] say otherwise.
 package heat

@@ -27,6 +27,9 @@ type implicit struct {
 	wait   sync.WaitGroup
 	k      []float64 // being solved for
 
+	shifts   [4][]float64 // what moving walls add to the flux, see shift
+	shifting float64      // their sign in the solve at hand, 0 for none
+
 	sides [2][]float64 // per row: homogeneous flux through left and right
 	ends  [2][]float64 // per column: through bottom and top
 }
@@ -50,6 +53,13 @@ func newImplicit(op *operator, workers int) *implicit {
 	im.x = lines.NewRows(op.nx, op.nz, sharingX, op.ring)
 	im.z = lines.NewColumns(op.nx, op.nz, sharingZ)
 	im.load()
+	for _, side := range staggered.Sides() {
+		n := op.nz
+		if side.Horizontal() {
+			n = op.nx
+		}
+		im.shifts[side] = make([]float64, n)
+	}
 	for e := range 2 {
 		im.sides[e], im.ends[e] = make([]float64, op.nz), make([]float64, op.nx)
 	}
@@ -138,28 +148,34 @@ func (im *implicit) factorPart(p linePart) {
 }
 
 func (im *implicit) alongX(p linePart) {
-	im.x.Solve(im.k, p.row0, p.row1)
 	op := im.op
+	if im.shifting != 0 && !op.ring {
+		im.enterSides(p)
+	}
+	im.x.Solve(im.k, p.row0, p.row1)
 	if op.ring {
 		return
 	}
 	left, right := &op.walls[staggered.Left], &op.walls[staggered.Right]
 	for j := p.row0; j < p.row1; j++ {
 		row := im.k[j*op.nx : (j+1)*op.nx]
-		im.sides[0][j] = left.response(j, row[0], row[min(1, op.nx-1)])
-		im.sides[1][j] = right.response(j, row[op.nx-1], row[max(op.nx-2, 0)])
+		im.sides[0][j] = left.response(j, row[0], row[min(1, op.nx-1)]) + im.shifting*im.shifts[staggered.Left][j]
+		im.sides[1][j] = right.response(j, row[op.nx-1], row[max(op.nx-2, 0)]) + im.shifting*im.shifts[staggered.Right][j]
 	}
 }
 
 func (im *implicit) alongZ(p linePart) {
-	im.z.Solve(im.k, p.col0, p.col1)
 	op := im.op
+	if im.shifting != 0 {
+		im.enterEnds(p)
+	}
+	im.z.Solve(im.k, p.col0, p.col1)
 	bottom, top := &op.walls[staggered.Bottom], &op.walls[staggered.Top]
 	b1, b2 := im.row(0), im.row(min(1, op.nz-1))
 	t1, t2 := im.row(op.nz-1), im.row(max(op.nz-2, 0))
 	for j := p.col0; j < p.col1; j++ {
-		im.ends[0][j] = bottom.response(j, b1[j], b2[j])
-		im.ends[1][j] = top.response(j, t1[j], t2[j])
+		im.ends[0][j] = bottom.response(j, b1[j], b2[j]) + im.shifting*im.shifts[staggered.Bottom][j]
+		im.ends[1][j] = top.response(j, t1[j], t2[j]) + im.shifting*im.shifts[staggered.Top][j]
 	}
 }
 
@@ -177,27 +193,27 @@ func (w *wallLine) response(j int, t1, t2 float64) float64 { return w.c2[j]*t2 -
 //	(1 − γ dt Ax)(1 − γ dt Az) k2 = dt F(T + k1) − 2 k1
 //	T ← T + 3/2 k1 + 1/2 k2
 //
-// Where F depends on time by walls that change at a constant speed, γ dt² ∂F/∂t
-// is added to the first right-hand side and taken from the second, evaluated at
-// the end of the step: that is F with the walls as they are at the shares γ and
-// 1 − γ of the step.
+// Where walls change in time by Δ, k1 is Δ at the wall and k2 is −Δ, as the
+// non-autonomous form asks; see shift for what the factors make of it.
 //
 // A steady state stays as it is, whatever dt. As γ ≥ 1/4, decaying modes are
 // multiplied by a number between −1 and 1 whatever dt: with w = −dt(λx+λz) and
 // p = (1 − γ dt λx)(1 − γ dt λz) ≥ 1 + γw it is 1 − 2w/p + (w²/2 + w)/p².
 func (st *Stepper) rosenbrock(t []float64, dt float64, rep *Report) error {
 	im, k, u := st.implicit, st.stage[0], st.stage[1]
-	st.moveTo(rosenbrockGamma)
+	st.moveTo(0)
 	if err := st.first(k, t, rows.Weights{Rate: dt}, 1./2, dt, rep); err != nil {
 		return err
 	}
 	im.prepare(dt)
+	im.shift(&st.motion)
 	im.solve(k, rosenbrockGamma/2, rep)
 	rows.Sum(u, t, k)
-	st.moveTo(1 - rosenbrockGamma)
+	st.moveTo(1)
 	if err := st.sweep.run(k, k, u, rows.Weights{Old: -2, Rate: dt}, 1./2, rep); err != nil {
 		return err
 	}
+	im.shifting = -im.shifting
 	im.solve(k, rosenbrockGamma/2, rep)
 	rows.Finish(t, u, k)
 	return nil

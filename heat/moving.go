@@ -3,6 +3,8 @@ package heat
 import (
 	"errors"
 	"fmt"
+
+	"example.org/overturn/stokes/staggered"
 )
 
 // SetWalls replaces the conditions on the walls at once. See [Stepper.MoveWalls]
@@ -44,9 +46,7 @@ type motion struct {
 // the motion is still to come.
 //
 // Under [Implicit] the flux through a wall whose temperature changes is of first
-// order if the step is refined in proportion to the cells, and so is the
-// temperature beside a side wall whose parts change at different speeds: take
-// shorter steps or an explicit scheme there.
+// order if the step is refined in proportion to the cells.
 func (st *Stepper) MoveWalls(w Walls) error {
 	if err := w.check(); err != nil {
 		return err
@@ -89,5 +89,85 @@ func (st *Stepper) settle(err error) {
 	default:
 		st.moveTo(1)
 		st.walls, m.under = m.walls, false
+	}
+}
+
+// shift prepares what moving walls contribute to the implicit solves: to the
+// fluxes through the bottom and the top, where k is solved for along z, their
+// change Δ; to those through the sides, where (1 − γ dt Az) k is solved for along
+// x, that of (1 − γ dt Az) Δ. Without the latter a wall whose parts change at
+// different speeds costs the order of the scheme.
+func (im *implicit) shift(m *motion) {
+	im.shifting = 0
+	if !m.under {
+		return
+	}
+	im.shifting = 1
+	op := im.op
+	for _, side := range staggered.Sides() {
+		from, end, shift := &m.from[side], &m.end[side], im.shifts[side]
+		if side.Horizontal() || m.walls.side(side).kind == prescribedFlux {
+			for j := range shift {
+				shift[j] = end.b[j] - from.b[j]
+			}
+		} else {
+			for j := range shift {
+				shift[j] = end.i0[j] - from.i0[j]
+			}
+		}
+		if side.Horizontal() || op.ring {
+			continue
+		}
+		column := 0
+		if side == staggered.Right {
+			column = op.nx - 1
+		}
+		im.sharpen(shift, column)
+		if m.walls.side(side).kind != prescribedFlux {
+			for j := range shift {
+				shift[j] *= from.c1[j] - from.c2[j]
+			}
+		}
+	}
+}
+
+// sharpen replaces values along a side by (1 − γ dt Az) times them. At the ends
+// it takes what conduction along z does to the values next to them.
+func (im *implicit) sharpen(v []float64, column int) {
+	op, n := im.op, len(v)
+	if n < 3 {
+		return
+	}
+	loss := im.sides[0] // free until the solve
+	for k := 1; k < n-1; k++ {
+		s := op.alongZ(column, k)
+		loss[k] = (s.south*v[k-1] + s.centre*v[k] + s.north*v[k+1]) / (op.dz[k] * op.cellCapacity(k*op.nx+column))
+	}
+	loss[0], loss[n-1] = loss[1], loss[n-2]
+	for k, l := range loss {
+		v[k] += im.factor * l
+	}
+}
+
+// enterSides adds what moving sides conduct to the cells beside them.
+func (im *implicit) enterSides(p linePart) {
+	op := im.op
+	n := op.nx
+	f := im.shifting * im.factor
+	for j := p.row0; j < p.row1; j++ {
+		first, last := j*n, j*n+n-1
+		im.k[first] += f * im.shifts[staggered.Left][j] * op.ix[0] / op.cellCapacity(first)
+		im.k[last] += f * im.shifts[staggered.Right][j] * op.ix[n-1] / op.cellCapacity(last)
+	}
+}
+
+// enterEnds adds what a moving bottom and top conduct.
+func (im *implicit) enterEnds(p linePart) {
+	op := im.op
+	top := (op.nz - 1) * op.nx
+	f := im.shifting * im.factor
+	for j := p.col0; j < p.col1; j++ {
+		im.k[j] += f * im.shifts[staggered.Bottom][j] * op.iz[0] / op.cellCapacity(j)
+		im.k[top+j] += f * im.shifts[staggered.Top][j] * op.iz[op.nz-1] / op.cellCapacity(top+j)
 	}
 }
