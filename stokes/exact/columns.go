@@ -113,7 +113,7 @@ type ColumnJump struct {
 	Width       float64 // > 0
 	Jump        float64 // between 0 and Width
 	Left, Right float64 // viscosities on the two sides of the jump, > 0
-	KX          float64 // ≥ 0
+	KX          float64 // > 0: without it the pressure alone would balance the force
 	KZ          float64 // > 0
 	Force       float64 // not 0
 }
@@ -126,7 +126,7 @@ func (p ColumnJump) Solve() (Solution, error) {
 	c.require(p.Jump > 0 && p.Jump < p.Width, "Jump", p.Jump, fmt.Sprintf("between 0 and Width = %v", p.Width))
 	c.positive("Left", p.Left)
 	c.positive("Right", p.Right)
-	c.notNegative("KX", p.KX)
+	c.positive("KX", p.KX)
 	c.positive("KZ", p.KZ)
 	c.notZero("Force", p.Force)
 	if c.err != nil {

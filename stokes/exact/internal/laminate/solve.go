@@ -6,7 +6,8 @@ import (
 )
 
 // RoundingTolerance is the largest estimate of the rounding error, relative to
-// the largest velocity or stress on any face, that [Solve] lets pass.
+// the largest velocity or stress on any face or in the middle of any layer,
+// that [Solve] lets pass.
 const RoundingTolerance = 1e-9
 
 // A RoundingError says that contributions to velocity or stress cancel to so
@@ -55,17 +56,18 @@ func (e End) components() [2]int {
 	}[e]
 }
 
-// A face holds velocities and tractions on a face of a layer: those of the
+// A face holds velocities and tractions on a plane of a layer: those of the
 // particular solution and those of each homogeneous solution.
 type face struct {
 	first int // number of the first amplitude
 	given traction
 	basis []traction
+	unit  float64 // 2ηk: stress over the velocity that belongs to it
 }
 
 func newFace(l *layer, sp *span, k, s float64) *face {
 	eta := l.viscosity(s)
-	f := &face{first: sp.first, given: l.fields.at(s).traction(k, eta)}
+	f := &face{first: sp.first, given: l.fields.at(s).traction(k, eta), unit: 2 * eta * k}
 	for i := range sp.basis {
 		f.basis = append(f.basis, sp.basis[i].at(s).traction(k, eta))
 	}
@@ -78,7 +80,7 @@ type conditions struct {
 	matrix *band
 	rhs    []float64
 	row    int
-	faces  []*face
+	planes []*face // all faces and middles of layers
 }
 
 func newConditions(p Problem, s *stack) *conditions {
@@ -87,7 +89,7 @@ func newConditions(p Problem, s *stack) *conditions {
 	for i := range s.spans {
 		l, sp := &s.flow.layers[i], &s.spans[i]
 		low, high := newFace(l, sp, p.K, l.low), newFace(l, sp, p.K, l.high)
-		c.faces = append(c.faces, low, high)
+		c.planes = append(c.planes, low, high, newFace(l, sp, p.K, 0.5*(l.low+l.high)))
 		if i > 0 {
 			sheet := s.spans[i-1].sheet
 			for component := range sheet {
@@ -129,31 +131,31 @@ func (c *conditions) add(below, above *face, component int, load float64) {
 	c.row++
 }
 
-// roundingError estimates the relative error of velocities or stresses on the
-// faces, whichever is larger, from the uncertainty of the amplitudes and the
-// rounding of the sums.
+// roundingError estimates the relative error of velocities or stresses,
+// whichever is larger, from the uncertainty of the amplitudes and the rounding
+// of the sums.
 func (c *conditions) roundingError(amplitudes []float64) float64 {
 	uncertainty := c.matrix.uncertainty(amplitudes)
-	var largest, wrong [2]float64 // velocity, stress
-	for _, f := range c.faces {
-		for component, sum := range f.given {
-			rounding, change := epsilon*math.Abs(sum), 0.0
+	var velocity, stress, velocityError, stressError float64
+	for _, f := range c.planes {
+		value, wrong := f.given, traction{}
+		for component := range value {
+			rounding, change := math.Abs(value[component]), 0.0
 			for i, t := range f.basis {
 				v := amplitudes[f.first+i] * t[component]
-				sum += v
-				rounding += epsilon * math.Abs(v)
+				value[component] += v
+				rounding += math.Abs(v)
 				change += uncertainty[f.first+i] * t[component]
 			}
-			kind := component / 2
-			largest[kind] = max(largest[kind], math.Abs(sum))
-			wrong[kind] = max(wrong[kind], rounding+math.Abs(change))
+			wrong[component] = epsilon*rounding + math.Abs(change)
 		}
+		velocity = max(velocity, math.Abs(value[velocityAcross]), math.Abs(value[velocityAlong]))
+		velocityError = max(velocityError, wrong[velocityAcross], wrong[velocityAlong])
+		stress = max(stress, math.Abs(value[stressAcross]), math.Abs(value[stressAlong]), f.unit*math.Abs(value[velocityAlong]))
+		stressError = max(stressError, wrong[stressAcross], wrong[stressAlong])
 	}
-	worst := 0.0
-	for kind, w := range wrong {
-		if w != 0 {
-			worst = max(worst, w/largest[kind])
-		}
+	if velocityError == 0 && stressError == 0 {
+		return 0 // at rest
 	}
-	return worst
+	return max(velocityError/velocity, stressError/stress)
 }
