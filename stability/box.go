@@ -82,6 +82,9 @@ func (b Box) rolls(n int) int { return n * (1 + int(b.Sides)) }
 // boxOnsets returns the onsets of patterns, the first ones in order, as many
 // as it takes to be sure of the first two.
 func (q *question) boxOnsets(box Box, branch Branch) ([]BoxOnset, error) {
+	if _, err := q.find(branch); errors.Is(err, ErrNoOnset) {
+		return nil, nil // nor is there one in a box
+	}
 	var found []BoxOnset
 	rising := 0
 	for n := 1; ; n++ {

@@ -72,7 +72,10 @@ func (e *engine) refine(on *ladder, c pencil.Curve, pt pencil.Point, first int, 
 		prev, cur = cur, answer{Solution: s, value: c.Objective(&s.Point), layout: lv.layout, system: on.system}
 		pt = s.Point
 		done := false
-		if i > first {
+		if i == first {
+			cur.valueError, cur.kError, cur.omegaError = math.Inf(1), math.Inf(1), math.Inf(1)
+			cur.size = e.sizeOf(&cur, c.Kind)
+		} else {
 			cur.size = e.sizeOf(&cur, c.Kind)
 			cur.estimate(&prev)
 			tail := lv.tail()

@@ -137,19 +137,22 @@ func (s *Solver) Find(search Search) (Onset, error) {
 			return Onset{}, fmt.Errorf("stability: %v number: %w", search.Number, err)
 		}
 	}
-	var a answer
-	switch {
-	case search.Branch == OscillatoryOnset:
-		a, err = q.oscillatory()
-	case search.Branch == StationaryOnset || search.Order > 0:
-		a, err = q.stationaryMinimum()
-	default:
-		a, err = q.first()
-	}
+	a, err := q.find(search.Branch)
 	if err != nil && !errors.Is(err, ErrNotConverged) {
 		return Onset{}, err
 	}
 	return q.onset(&a), err
+}
+
+// find returns the onset on a branch.
+func (q *question) find(b Branch) (answer, error) {
+	switch {
+	case b == OscillatoryOnset:
+		return q.oscillatory()
+	case b == StationaryOnset || q.order > 0:
+		return q.stationaryMinimum()
+	}
+	return q.first()
 }
 
 // Neutral returns the neutral state of wavenumber k > 0 with the smallest

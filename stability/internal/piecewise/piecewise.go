@@ -73,6 +73,7 @@ type resolver struct {
 	f       func(float64) float64
 	scale   Scale
 	largest float64 // absolute value seen so far
+	width   float64 // of the interval
 	edges   []float64
 	out     Function
 }
@@ -86,7 +87,7 @@ const maxRestarts = 8
 func Resolve(f func(float64) float64, lo, hi float64, breaks []float64, scale Scale) (*Function, error) {
 	breaks = slices.Clone(breaks)
 	for restart := 0; ; restart++ {
-		r := &resolver{f: f, scale: scale}
+		r := &resolver{f: f, scale: scale, width: hi - lo}
 		if err := r.resolve(lo, hi, breaks); err != nil {
 			return nil, err
 		}
@@ -146,9 +147,19 @@ func (r *resolver) panel(a, b float64, depth int) error {
 		reference = local
 	}
 	series := transform(&values)
-	if last := largestOf(series[points-tail:]); last <= resolved*reference || depth >= maxDepth {
+	if depth >= maxDepth {
 		r.accept(b, series, reference)
 		return nil
+	}
+	if last := largestOf(series[points-tail:]); last <= resolved*reference {
+		fits, err := r.fits(a, b, series, reference)
+		if err != nil {
+			return err
+		}
+		if fits {
+			r.accept(b, series, reference)
+			return nil
+		}
 	}
 	middle := (a + b) / 2
 	if depth >= edgeDepth {
@@ -165,6 +176,30 @@ func (r *resolver) panel(a, b float64, depth int) error {
 		return err
 	}
 	return r.panel(middle, b, depth+1)
+}
+
+const (
+	// samples is the number of points, spread over the whole interval, at
+	// which a series that looks resolved is compared with the function, so
+	// that no narrow feature slips through between Gauss points.
+	samples = 200
+	misfit  = 1e-9
+)
+
+// fits compares a series with the function.
+func (r *resolver) fits(a, b float64, series []float64, reference float64) (bool, error) {
+	n := 3 + int(samples*(b-a)/r.width)
+	for i := range n {
+		x := (2*float64(i)+1)/float64(n) - 1
+		z := a + (b-a)/2*(1+x)
+		if err := r.see(z); err != nil {
+			return false, err
+		}
+		if math.Abs(r.f(z)-sum(series, x)) > misfit*reference {
+			return false, nil
+		}
+	}
+	return true, nil
 }
 
 func (r *resolver) accept(b float64, series []float64, reference float64) {
