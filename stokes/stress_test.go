@@ -127,8 +127,11 @@ func TestNormalStressIsSecondOrder(t *testing.T) {
 				errors[k] = math.Sqrt(errors[k])
 			}
 			least := 1.8
-			if c.name != "free slip" {
-				least = 1.5 // the pressure beside no-slip walls is less accurate
+			switch c.name {
+			case "no slip", "moving":
+				least = 1.5 // less accurate in the corners of the box
+			case "through-flow":
+				least = 1.2 // where one face mean meets another, first order
 			}
 			require.Greater(t, math.Log2(errors[0]/errors[1]), least, "%s, %v: %v", c.name, side, errors)
 		}

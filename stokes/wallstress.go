@@ -9,9 +9,10 @@ import (
 // NormalStressTo stores in dst the normal stress on a wall at the centres of its
 // faces, σzz at the nx faces of Bottom and Top, σxx at the nz faces of Left and
 // Right, and returns dst. A nil dst is allocated. It is extrapolated from the
-// three nearest rows of cells by a parabola: second order accurate on free-slip
-// walls, of order about 1.6 on no-slip walls, where viscosity and force are
-// smooth. On Top, minus this stress, less its mean and
+// three nearest rows of cells by a parabola: second order accurate where
+// viscosity and force are smooth, but for the corners of the box between
+// no-slip walls, and of first order in those between walls with through-flow.
+// On Top, minus this stress, less its mean and
 // divided by the difference of weights across the surface, is the dynamic
 // topography; positive is up.
 func (sv *Solver) NormalStressTo(dst []float64, side staggered.Side, flow *staggered.Flow, viscosity *staggered.Scalar) ([]float64, error) {
