@@ -21,11 +21,11 @@ const (
 	// preconditioned by a multigrid cycle.
 	Multigrid
 
-	// Transform solves directly, by sine transforms along x and elimination
-	// along z, and refines the answer with the residual of the equations. It
-	// takes a viscosity that does not vary along x, equally wide columns whose
-	// number has no prime factor above eleven, free-slip sides, and no flow
-	// through walls.
+	// Transform solves directly, by sine or Fourier transforms along x and
+	// elimination along z, and refines the answer with the residual of the
+	// equations. It takes a viscosity that does not vary along x, at least three
+	// equally wide columns whose number has no prime factor above eleven, two
+	// rows, free-slip or periodic sides, and no flow through walls.
 	Transform
 )
 
@@ -56,7 +56,7 @@ func (sv *Solver) choose() (Method, error) {
 	reason := ""
 	switch {
 	case !sv.suits:
-		reason = "it takes free-slip sides, at least three columns of equal width whose number has no prime factor above eleven, and two rows"
+		reason = "it takes free-slip or periodic sides, two rows, and at least three columns of equal width whose number has no prime factor above eleven"
 	case !sv.layered:
 		reason = "the viscosity varies along x"
 	case sv.load.source != nil || sv.motion.crossed():

@@ -507,10 +507,17 @@ func TestTransformAgreesWithMultigrid(t *testing.T) {
 		{},
 		{Bottom: stokes.NoSlip},
 		{Bottom: stokes.NoSlip, Top: stokes.NoSlip.Moving(func(x float64) float64 { return math.Sin(pi * x) })},
+		{Left: stokes.Periodic, Right: stokes.Periodic},
+		{Left: stokes.Periodic, Right: stokes.Periodic, Bottom: stokes.NoSlip},
+		{Left: stokes.Periodic, Right: stokes.Periodic, Bottom: stokes.NoSlip, Top: stokes.NoSlip.Moving(func(x float64) float64 { return 1 })},
 	} {
 		g, err := staggered.Graded(36, 53, 1, 1, staggered.Grading{Bottom: 3})
 		require.NoError(t, err)
-		_, force := plume(g, 1)
+		force := staggered.NewVector(g)
+		force.Fill(func(x, z float64) float64 { return math.Sin(2*pi*x) * z }, func(x, z float64) float64 { return math.Cos(2*pi*x+1) * math.Sin(pi*z) })
+		if w.Bottom.String() == "no slip" {
+			force.Fill(func(x, z float64) float64 { return 1 + math.Sin(2*pi*x)*z }, nil)
+		}
 		eta := staggered.NewScalar(g)
 		eta.Fill(func(_, z float64) float64 { return math.Exp(5 * math.Sin(4*z)) })
 		tight := stokes.Settings{Tolerance: 1e-11, Method: stokes.Transform}

@@ -14,7 +14,9 @@ func (sv *Solver) Balance(p []float64, r Fields) {
 		rdz := l.Z.RH[j]
 		sum, along, weight := 0.0, 0.0, 0.0
 		for i := 1; i <= n; i++ {
-			along += x[i] * rdz // zero on the wall
+			if i > 1 {
+				along += x[i] * rdz
+			}
 			sum += along
 			weight += z[i]
 		}
@@ -27,7 +29,9 @@ func (sv *Solver) Balance(p []float64, r Fields) {
 		meanBelow = mean
 		along = level
 		for i := 1; i <= n; i++ {
-			along += x[i] * rdz
+			if i > 1 {
+				along += x[i] * rdz
+			}
 			row[i] += along
 		}
 	}

@@ -1,15 +1,12 @@
 package layered
 
 import (
-	"math"
-
 	"example.org/overturn/stokes/internal/multigrid"
 	"example.org/overturn/stokes/internal/team"
-	"gonum.org/v1/gonum/dsp/fourier"
 )
 
-// A Solver finds velocities from momentum residuals. Interior corners, those
-// of columns 2..nx and rows 2..nz, are its unknowns: nx−1 modes by nz−1 rows.
+// A Solver finds velocities from momentum residuals. Its unknowns are the
+// amplitudes of modes of ψ on the nz−1 rows of corners between the walls.
 type Solver struct {
 	l     *multigrid.Level
 	modes int
@@ -17,13 +14,16 @@ type Solver struct {
 	team  *team.Team
 
 	kappa2 []float64 // κ² of each mode
+	scale  float64   // of right-hand sides
 
 	// Factors L D Lᵀ of each mode, row after row: 1/D and both subdiagonals
 	// of L.
 	inverse, below, below2 []float64
 
-	psi        []float64 // right-hand side, then modes of ψ, then ψ
-	transforms []*fourier.DST
+	psi        []float64   // amplitudes, then values of ψ
+	loads      [][]float64 // right-hand side of one row, for each part
+	transforms []transform
+	channel    *channel // nil between closed sides
 
 	u Fields
 	r Fields
@@ -39,10 +39,10 @@ type Fields = multigrid.Fields
 const largestFactor = 11
 
 // Suits reports whether the geometry allows the direct solution: it takes
-// equally wide columns, whose number has only small prime factors, closed
-// free-slip sides and at least two rows.
+// equally wide columns, whose number has only small prime factors, sides that
+// are periodic or closed and free of shear stress, and at least two rows.
 func Suits(l *multigrid.Level) bool {
-	if l.X.N < 3 || l.Z.N < 2 || l.X.Lo != multigrid.Slip || l.X.Hi != multigrid.Slip {
+	if l.X.N < 3 || l.Z.N < 2 || l.X.Lo == multigrid.Stick || l.X.Hi == multigrid.Stick {
 		return false
 	}
 	for i := 2; i <= l.X.N; i++ {
@@ -61,18 +61,24 @@ func Suits(l *multigrid.Level) bool {
 
 // New makes a solver for a level that suits it.
 func New(l *multigrid.Level, t *team.Team) *Solver {
-	sv := &Solver{l: l, modes: l.X.N - 1, rows: l.Z.N - 1, team: t}
-	n := sv.modes * sv.rows
-	all := make([]float64, 4*n)
-	sv.inverse, sv.below, sv.below2, sv.psi = all[:n], all[n:2*n], all[2*n:3*n], all[3*n:]
-	sv.kappa2 = make([]float64, sv.modes)
-	for m := range sv.kappa2 {
-		k := 2 * math.Sin(float64(m+1)*math.Pi/float64(2*l.X.N)) * l.X.RH[1]
-		sv.kappa2[m] = k * k
+	sv := &Solver{l: l, rows: l.Z.N - 1, team: t}
+	make1, modes := newSine, sineModes
+	if l.X.Lo == multigrid.Wrap {
+		make1, modes = newPeriodic, periodicModes
+		sv.channel = newChannel(l.Z.N)
 	}
+	var factor float64
+	sv.kappa2, factor = modes(l.X.N, l.X.H[1])
+	sv.scale = 1 / (factor * l.X.H[1]) // the quadratic form carries dx
+	sv.modes = len(sv.kappa2)
 	for range t.Size() {
-		sv.transforms = append(sv.transforms, fourier.NewDST(sv.modes))
+		sv.transforms = append(sv.transforms, make1(l.X.N))
+		sv.loads = append(sv.loads, make([]float64, sv.values()))
 	}
+	n := sv.modes * sv.rows
+	all := make([]float64, 3*n)
+	sv.inverse, sv.below, sv.below2 = all[:n], all[n:2*n], all[2*n:]
+	sv.psi = make([]float64, max(sv.modes, sv.values())*sv.rows)
 	byModes := func(work func(lo, hi int)) func(int) {
 		return func(part int) { work(team.Block(sv.modes, part, t.Size())) }
 	}
@@ -87,7 +93,7 @@ func New(l *multigrid.Level, t *team.Team) *Solver {
 	sv.factorPass = byModes(sv.factor)
 	sv.forwardPass = byRows(sv.rows, sv.loadRow)
 	sv.solvePass = byModes(sv.eliminate)
-	sv.backPass = byRows(sv.rows, func(part, k int) { sv.transforms[part].Transform(sv.row(sv.psi, k), sv.row(sv.psi, k)) })
+	sv.backPass = byRows(sv.rows, func(part, k int) { sv.transforms[part].back(sv.psiRow(k)[:sv.values()], sv.psiRow(k)[:sv.modes]) })
 	sv.addPass = byRows(l.Z.N, sv.addRow)
 	return sv
 }
@@ -95,8 +101,27 @@ func New(l *multigrid.Level, t *team.Team) *Solver {
 // row returns row k of an array of unknowns, which is corner row k+2.
 func (sv *Solver) row(a []float64, k int) []float64 { return a[k*sv.modes:][:sv.modes] }
 
+// values returns the number of columns of corners where ψ is unknown.
+func (sv *Solver) values() int {
+	if sv.l.X.Lo == multigrid.Wrap {
+		return sv.l.X.N
+	}
+	return sv.l.X.N - 1
+}
+
+// psiRow returns row k of ψ, with room for values and for modes.
+func (sv *Solver) psiRow(k int) []float64 {
+	stride := max(sv.modes, sv.values())
+	return sv.psi[k*stride:][:stride]
+}
+
 // Factor takes over the viscosity of the level, which must not vary along x.
-func (sv *Solver) Factor() { sv.team.Run(sv.factorPass) }
+func (sv *Solver) Factor() {
+	sv.team.Run(sv.factorPass)
+	if sv.channel != nil {
+		sv.channel.factor(sv)
+	}
+}
 
 // factor computes L D Lᵀ for the modes lo ≤ m < hi. With row k of an upper
 // triangle that begins d, e, f, the recursions are
@@ -194,27 +219,34 @@ func (sv *Solver) Add(u, r Fields) {
 	sv.team.Run(sv.solvePass)
 	sv.team.Run(sv.backPass)
 	sv.team.Run(sv.addPass)
+	if sv.channel != nil {
+		sv.channel.add(sv, u, r)
+	}
 }
 
 // loadRow transforms the curl of the residual at corner row k+2.
 func (sv *Solver) loadRow(part, k int) {
 	l, j := sv.l, k+2
-	x0, x1, z := l.Row(sv.r.X, j-1)[2:], l.Row(sv.r.X, j)[2:], l.Row(sv.r.Z, j)[1:]
-	b := sv.row(sv.psi, k)
-	x0, x1, z = x0[:len(b)], x1[:len(b)], z[:len(b)+1]
+	x0, x1, z := l.Row(sv.r.X, j-1), l.Row(sv.r.X, j), l.Row(sv.r.Z, j)
 	rdx, r0, r1 := l.X.RH[1], l.Z.RH[j-1], l.Z.RH[j]
-	// The transform and its inverse multiply by 2nx, the quadratic form by dx.
-	scale := rdx / float64(2*l.X.N)
-	for i := range b {
-		b[i] = scale * ((x0[i]*r0 - x1[i]*r1) + (z[i+1]-z[i])*rdx)
+	b := sv.loads[part]
+	first := l.X.N - len(b) + 1 // column of the first corner
+	left := z[l.X.N]            // of corner 1
+	if first == 2 {
+		left = z[1]
 	}
-	sv.transforms[part].Transform(b, b)
+	x0, x1, z = x0[first:][:len(b)], x1[first:][:len(b)], z[first:][:len(b)]
+	for i := range b {
+		b[i] = sv.scale * ((x0[i]*r0 - x1[i]*r1) + (z[i]-left)*rdx)
+		left = z[i]
+	}
+	sv.transforms[part].forward(sv.psiRow(k)[:sv.modes], b)
 }
 
 // eliminate solves for the modes lo ≤ m < hi.
 func (sv *Solver) eliminate(lo, hi int) {
 	for k := 1; k < sv.rows; k++ {
-		y, y1, b1 := sv.row(sv.psi, k)[lo:hi], sv.row(sv.psi, k-1)[lo:hi], sv.row(sv.below, k)[lo:hi]
+		y, y1, b1 := sv.psiRow(k)[lo:hi], sv.psiRow(k - 1)[lo:hi], sv.row(sv.below, k)[lo:hi]
 		y1, b1 = y1[:len(y)], b1[:len(y)]
 		if k == 1 {
 			for m := range y {
@@ -222,13 +254,13 @@ func (sv *Solver) eliminate(lo, hi int) {
 			}
 			continue
 		}
-		y2, b2 := sv.row(sv.psi, k-2)[lo:hi][:len(y)], sv.row(sv.below2, k)[lo:hi][:len(y)]
+		y2, b2 := sv.psiRow(k - 2)[lo:hi][:len(y)], sv.row(sv.below2, k)[lo:hi][:len(y)]
 		for m := range y {
 			y[m] -= b1[m]*y1[m] + b2[m]*y2[m]
 		}
 	}
 	for k := sv.rows - 1; k >= 0; k-- {
-		y, d := sv.row(sv.psi, k)[lo:hi], sv.row(sv.inverse, k)[lo:hi]
+		y, d := sv.psiRow(k)[lo:hi], sv.row(sv.inverse, k)[lo:hi]
 		d = d[:len(y)]
 		for m := range y {
 			y[m] *= d[m]
@@ -238,7 +270,7 @@ func (sv *Solver) eliminate(lo, hi int) {
 			if n == 2 {
 				b = sv.row(sv.below2, k+2)
 			}
-			b, x := b[lo:hi][:len(y)], sv.row(sv.psi, k+n)[lo:hi][:len(y)]
+			b, x := b[lo:hi][:len(y)], sv.psiRow(k + n)[lo:hi][:len(y)]
 			for m := range y {
 				y[m] -= b[m] * x[m]
 			}
@@ -249,22 +281,34 @@ func (sv *Solver) eliminate(lo, hi int) {
 // addRow adds the velocity of ψ to cell row k+1.
 func (sv *Solver) addRow(_, k int) {
 	l, j := sv.l, k+1
-	x := l.Row(sv.u.X, j)[2:][:sv.modes]
+	n := sv.values()
+	first := l.X.N - n + 1
+	x := l.Row(sv.u.X, j)[first:][:n]
 	rdz, rdx := l.Z.RH[j], l.X.RH[1]
 	if k < sv.rows {
-		for i, v := range sv.row(sv.psi, k) { // the upper corners
+		for i, v := range sv.psiRow(k)[:n] { // the upper corners
 			x[i] += v * rdz
 		}
 	}
 	if k == 0 {
 		return
 	}
-	lower, z := sv.row(sv.psi, k-1), l.Row(sv.u.Z, j)[1:]
-	last := 0.0
+	lower, z := sv.psiRow(k - 1)[:n], l.Row(sv.u.Z, j)[1:][:l.X.N]
+	left := 0.0 // of cell 1
+	if first == 1 {
+		left = lower[0]
+	}
+	rest := lower[2-first:] // from the right corner of cell 1
 	for i, v := range lower {
 		x[i] -= v * rdz
-		z[i] -= (v - last) * rdx
-		last = v
 	}
-	z[sv.modes] += last * rdx
+	for i, v := range rest {
+		z[i] -= (v - left) * rdx
+		left = v
+	}
+	last := 0.0 // of the right corner of the last cell
+	if first == 1 {
+		last = lower[0]
+	}
+	z[l.X.N-1] -= (last - left) * rdx
 }
