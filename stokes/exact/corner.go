@@ -9,8 +9,9 @@ import "math"
 // one at which fluid is drawn through.
 //
 // The stream function is r f(θ): velocity depends on the direction alone,
-// pressure and stress fall off as 1/r. At the apex itself they are infinite and
-// At returns NaN. The pressure tends to zero far away.
+// pressure and stress fall off as 1/r. The apex itself has no values: there At
+// returns infinities and NaN. The pressure tends to zero far away. In a wedge
+// of a small opening α rounding errors grow as 1/α².
 type Corner struct {
 	Viscosity float64 // > 0
 	From, To  Plate   // From.Angle < To.Angle ≤ From.Angle + 2π

@@ -34,8 +34,8 @@ func (m *band) span(row int) (from, to int) {
 	return max(0, row-lower), min(m.n, row+upper+1)
 }
 
-// balance divides each row and its right-hand side by the largest entry of
-// the row.
+// balance divides each row and its right-hand side by the power of two next
+// to the largest entry of the row, which rounds nothing.
 func (m *band) balance(rhs []float64) {
 	for r := range m.n {
 		largest := 0.0
@@ -43,13 +43,11 @@ func (m *band) balance(rhs []float64) {
 		for _, v := range row {
 			largest = max(largest, math.Abs(v))
 		}
-		if largest == 0 {
-			continue
+		_, exponent := math.Frexp(largest)
+		for i, v := range row {
+			row[i] = math.Ldexp(v, -exponent)
 		}
-		for i := range row {
-			row[i] /= largest
-		}
-		rhs[r] /= largest
+		rhs[r] = math.Ldexp(rhs[r], -exponent)
 	}
 }
 

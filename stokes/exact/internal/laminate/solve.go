@@ -23,7 +23,16 @@ func (e *RoundingError) Error() string {
 
 // Solve finds the flow. The error is nil or a [*RoundingError].
 func Solve(p Problem) (*Flow, error) {
-	s := lay(p)
+	f, e := lay(p).solve(p)
+	if !(e <= RoundingTolerance) {
+		return nil, &RoundingError{e}
+	}
+	return f, nil
+}
+
+// solve finds the amplitudes of the homogeneous solutions, adds these to the
+// flow and estimates the relative rounding error.
+func (s *stack) solve(p Problem) (f *Flow, roundingError float64) {
 	c := newConditions(p, s)
 	amplitudes := c.matrix.solveRefined(c.rhs)
 	for i, sp := range s.spans {
@@ -31,10 +40,7 @@ func Solve(p Problem) (*Flow, error) {
 			s.flow.layers[i].fields.add(&sp.basis[j], amplitudes[sp.first+j])
 		}
 	}
-	if e := c.roundingError(amplitudes); !(e <= RoundingTolerance) {
-		return s.flow, &RoundingError{e}
-	}
-	return s.flow, nil
+	return s.flow, c.roundingError(amplitudes)
 }
 
 // A traction holds the components that are continuous across an interface.
