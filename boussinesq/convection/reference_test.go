@@ -157,3 +157,84 @@ func TestBenchmarkCasesToManyDigits(t *testing.T) {
 		}
 	}
 }
+
+// Grids too coarse for the boundary layers converge at an order near 2 by
+// chance: Nu = 13.0111, 13.5644, 13.7002 on 16, 32 and 64 uniform rows, while
+// the limit is 13.782. The uncertainty must hold it all the same.
+func TestUncertaintyHoldsOnCoarseGrids(t *testing.T) {
+	for _, rows := range []int{32, 64, 128} {
+		g, err := staggered.Uniform(rows, rows, 1, 1)
+		require.NoError(t, err)
+		study, err := convection.Refine(context.Background(), convection.Problem{Grid: g, Rayleigh: 2.31e5}, 3, nil)
+		require.NoError(t, err)
+		e, _ := study.Get("NuTop")
+		assert.InDelta(t, 13.782, e.Value, e.Uncertainty, "%d rows: %v", rows, e)
+		assert.Greater(t, study.Deviation, 0.3)
+	}
+}
+
+func TestStudiesWantNestedGrids(t *testing.T) {
+	g, err := staggered.Uniform(36, 34, 1, 1)
+	require.NoError(t, err)
+	p := convection.Problem{Grid: g, Rayleigh: 1e4}
+	_, err = convection.Refine(context.Background(), p, 3, nil)
+	assert.ErrorContains(t, err, "36x34 cells so often, want multiples of 4")
+	_, err = convection.Refine(context.Background(), p, 1, nil)
+	assert.ErrorContains(t, err, "at least 2")
+	study, err := convection.Refine(context.Background(), p, 2, nil)
+	require.NoError(t, err)
+	e, _ := study.Get("NuTop")
+	assert.InDelta(t, 4.884409, e.Value, e.Uncertainty)
+	_, ok := study.Get("nothing")
+	assert.False(t, ok)
+	assert.Contains(t, study.String(), "RMSVelocity")
+}
+
+func TestSteadyFailsClearly(t *testing.T) {
+	g, err := staggered.Uniform(16, 16, 1, 1)
+	require.NoError(t, err)
+	p := convection.Problem{Grid: g, Rayleigh: 1e5}
+	sol, err := convection.Steady(context.Background(), p, &convection.SteadySettings{MaxNewton: 3})
+	require.ErrorIs(t, err, convection.ErrNotSteady)
+	assert.Greater(t, sol.Residual, 1e-6, "the best answer comes with the error")
+	ctx, cancel := context.WithCancel(context.Background())
+	cancel()
+	_, err = convection.Steady(ctx, p, nil)
+	assert.ErrorIs(t, err, context.Canceled)
+	for want, s := range map[string]*convection.SteadySettings{
+		"Tolerance is -1":     {Tolerance: -1},
+		"MaxNewton is -1":     {MaxNewton: -1},
+		"MaxDirections is -2": {MaxDirections: -2},
+	} {
+		_, err := convection.Steady(context.Background(), p, s)
+		assert.ErrorContains(t, err, "SteadySettings."+want)
+	}
+}
+
+// A guess on another grid leads Newton's method to the same state, and a layer
+// below onset to rest.
+func TestSteadyFromAGuess(t *testing.T) {
+	g, err := staggered.Uniform(32, 32, 1, 1)
+	require.NoError(t, err)
+	p := convection.Problem{Grid: g, Rayleigh: 1e4}
+	sol, err := convection.Steady(context.Background(), p, nil)
+	require.NoError(t, err)
+	p.Rayleigh = 1.3e4
+	far, err := convection.Steady(context.Background(), p, nil)
+	require.NoError(t, err)
+	steps := 0
+	near, err := convection.Steady(context.Background(), p, &convection.SteadySettings{
+		Guess: sol.Temperature, Monitor: func(convection.SteadyProgress) { steps++ },
+	})
+	require.NoError(t, err)
+	assert.InEpsilon(t, far.NuTop, near.NuTop, 1e-7)
+	assert.Equal(t, near.Newton, steps)
+	assert.Less(t, near.Newton, 6)
+	assert.Contains(t, near.String(), "steady on 32x32")
+
+	p.Rayleigh = 500
+	rest, err := convection.Steady(context.Background(), p, nil)
+	require.NoError(t, err)
+	assert.InDelta(t, 1, rest.NuTop, 1e-6)
+	assert.Less(t, rest.RMSVelocity, 1e-4)
+}

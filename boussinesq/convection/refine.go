@@ -18,6 +18,11 @@ type Study struct {
 	// Estimates of the diagnostics, under the names and in the order of
 	// [Diagnostics.All].
 	Estimates []NamedEstimate
+
+	// Deviation is the largest distance of an observed order from 2 among the
+	// diagnostics, 1 where one does not converge at all: near zero on grids that
+	// resolve the state, above a few tenths on grids that do not.
+	Deviation float64
 }
 
 // A NamedEstimate is the estimate of one diagnostic.
@@ -51,8 +56,12 @@ func (s *Study) String() string {
 // diagnostic with its numerical uncertainty by [Extrapolate]. The number of
 // cells of p.Grid must be divisible by two in both directions each time.
 //
-// The estimate is of the error of the discretisation only; the error of the
-// solve is of the order of SteadySettings.Tolerance.
+// Three coarse grids may show an order of 2 by chance. Hence every uncertainty is
+// at least 3·Deviation² times the step from the finest value to the
+// extrapolated one, up to three times the step: what the worst resolved
+// diagnostic says about the grids counts for all. The estimate is of the error of
+// the discretisation only; that of the solve is of the order of
+// SteadySettings.Tolerance.
 func Refine(ctx context.Context, p Problem, grids int, s *SteadySettings) (*Study, error) {
 	if grids < 2 {
 		return nil, fmt.Errorf("convection: a study of %d grids, want at least 2", grids)
@@ -97,7 +106,33 @@ func (s *Study) estimate() error {
 		}
 		s.Estimates = append(s.Estimates, NamedEstimate{Name: name, Estimate: e})
 	}
+	if len(sizes) > 2 {
+		s.distrust(values)
+	}
 	return nil
+}
+
+// unchanging is the relative change between the finest two grids below which
+// the order of a diagnostic means nothing: it is converged, or fixed by symmetry.
+const unchanging = 1e-6
+
+// distrust widens the uncertainties by what the worst resolved diagnostic says.
+func (s *Study) distrust(values map[string][]float64) {
+	for _, e := range s.Estimates {
+		v := values[e.Name]
+		n := len(v)
+		switch {
+		case math.Abs(v[n-1]-v[n-2]) <= unchanging*math.Abs(v[n-1]):
+		case math.IsNaN(e.Order):
+			s.Deviation = 1
+		default:
+			s.Deviation = max(s.Deviation, min(1, math.Abs(e.Order-SchemeOrder)))
+		}
+	}
+	for i := range s.Estimates {
+		e := &s.Estimates[i]
+		e.Uncertainty = max(e.Uncertainty, safety*s.Deviation*s.Deviation*math.Abs(e.Value-e.Finest))
+	}
 }
 
 // cellSize returns the root of the mean area of a cell.
