@@ -121,8 +121,6 @@ func difference(a, b *staggered.Flow) (v, p float64) {
 
 const pi = math.Pi
 
-var flat = series{}
-
 // smooth varies by a factor of about 60, steepest in z.
 func smooth() (gx, gz series) {
 	return series{terms: [][3]float64{{0.6, 2 * pi, 0.3}}}, series{terms: [][3]float64{{1.5, 2, 1}}}

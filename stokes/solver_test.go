@@ -348,6 +348,28 @@ func TestReport(t *testing.T) {
 	require.Contains(t, sv.String(), "48x48")
 }
 
+func TestReportedResidualsAreThoseOfTheEquations(t *testing.T) {
+	g, err := staggered.Graded(24, 30, 2, 1, staggered.Grading{Top: 2})
+	require.NoError(t, err)
+	eta, _ := plume(g, 1e3)
+	force := staggered.NewVector(g)
+	force.Fill(nil, func(x, z float64) float64 { return math.Cos(pi*x) * z }) // rows and columns add up to zero
+	sv, err := stokes.NewSolver(g, stokes.Walls{}, &stokes.Settings{Tolerance: 1e-3})
+	require.NoError(t, err)
+	flow := staggered.NewFlow(g)
+	r, err := sv.Solve(context.Background(), flow, eta, force)
+	require.NoError(t, err)
+	left := staggered.NewVector(g)
+	require.NoError(t, sv.ApplyTo(left, flow, eta))
+	for i := range 24 { // walls are no unknowns
+		force.Z[i], force.Z[30*24+i] = 0, 0
+	}
+	for i, f := range force.Z {
+		left.Z[i] += f
+	}
+	require.InEpsilon(t, math.Sqrt(left.Dot(left)/force.Dot(force)), r.Momentum, 1e-6)
+}
+
 func TestNotConverged(t *testing.T) {
 	g := uniform(t, 48, 48, 1, 1)
 	eta, force := plume(g, 1e6)

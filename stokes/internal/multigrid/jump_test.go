@@ -29,3 +29,38 @@ func TestJumpsAreFound(t *testing.T) {
 	steep := newProblem(square(32), exponential(1e20)).sv.Finest()
 	require.Equal(t, steepSweeps, steep.jumps.sweeps)
 }
+
+// Rows of one colour may be shared out in any way.
+func TestJumpsAreRelaxedInParallelToTheBit(t *testing.T) {
+	for name, b := range boxes() {
+		p := newProblem(b, circles(1e3))
+		l := p.sv.Finest()
+		l.u, l.f = newFields(l.size()), newFields(l.size())
+		l.random(l.f, 1)
+		run := func(parts int) Fields {
+			l.random(l.u, 2)
+			l.jumps.backwards = !l.jumps.backwards
+			for c := range jumpColours {
+				l.jumps.colour = c
+				if parts == 0 {
+					for j := 1 + c; j <= l.Z.N; j += jumpColours {
+						l.relaxRow(j)
+					}
+					continue
+				}
+				for part := range parts {
+					l.jumps.share(parts - 1 - part)
+				}
+			}
+			l.jumps.backwards = !l.jumps.backwards
+			return l.u.clone()
+		}
+		want := run(0)
+		for parts := 1; parts <= 3; parts++ {
+			columns, from := l.jumps.columns, l.jumps.from
+			l.makeJumps(parts)
+			l.jumps.columns, l.jumps.from = columns, from
+			require.Equal(t, want, run(parts), "%s, %d parts", name, parts)
+		}
+	}
+}

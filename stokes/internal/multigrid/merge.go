@@ -25,7 +25,6 @@ type merge struct {
 	lowW, upW []float64
 	lowN, upN []float64 // gather weights of nodes node[I]-1 and node[I]+1
 	triples   []int     // coarse cells with three children
-	trivial   bool      // every coarse cell is one fine cell
 	allPairs  bool      // every coarse cell is two fine cells
 }
 
@@ -156,14 +155,11 @@ func newMerge(fine *Axis, count []int) *merge {
 	n := len(count)
 	m := &merge{fine: fine, count: make([]int, n+2), node: make([]int, n+2), cell: make([]int, fine.N+2)}
 	widths := make([]float64, n)
-	m.trivial, m.allPairs = true, true
+	m.allPairs = true
 	f := 1
 	for I := 1; I <= n; I++ {
 		m.count[I] = count[I-1]
 		m.node[I] = f
-		if count[I-1] != 1 {
-			m.trivial = false
-		}
 		if count[I-1] != 2 {
 			m.allPairs = false
 		}
