@@ -110,7 +110,7 @@ func table(w io.Writer, b benchmark, study *convection.Study) error {
 		_, values := onGrids(study, v.quantity)
 		published := "-"
 		if !math.IsNaN(v.published) {
-			published = fmt.Sprintf("%.7g", v.published)
+			published = fmt.Sprintf("%.8g", v.published)
 		}
 		fmt.Fprintf(w, "  %-5s %12.7g %12.7g %12.7g %6.2f %13.8g ± %-6.0e %12s %14.9g %10.1e\n", v.quantity,
 			values[0], values[1], values[2], e.Order, e.Value, e.Uncertainty, published, v.reference, e.Value/v.reference-1)
