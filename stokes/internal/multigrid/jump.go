@@ -179,21 +179,23 @@ func (l *Level) relaxRow(j int) {
 	if len(columns) == 0 {
 		return
 	}
-	c := l.cutRow(j)
+	m := l.rowMetric(j)
+	wraps, last := l.X.wraps(), l.X.N
 	for k := range columns {
 		if l.jumps.backwards {
 			k = len(columns) - 1 - k
 		}
 		i := int(columns[k])
-		c.relax(i)
-		if l.X.wraps() && (i == 1 || i == l.X.N) {
-			if i == l.X.N {
-				c.x[1] = c.x[i+1] // the face at the seam has two slots
+		l.relaxCell(&m, j, i)
+		if wraps && (i == 1 || i == last) {
+			x := l.row(l.u.X, j)
+			if i == last {
+				x[1] = x[i+1] // the face at the seam has two slots
 			}
-			l.wrapX(c.x)
-			l.wrapX(c.z[1])
-			l.wrapX(c.z[2])
-			l.wrapX(c.p[1])
+			l.wrapX(x)
+			l.wrapX(l.row(l.u.Z, j))
+			l.wrapX(l.row(l.u.Z, j+1))
+			l.wrapX(l.row(l.u.P, j))
 		}
 	}
 }
