@@ -68,13 +68,17 @@ func (v Verdict) String() string {
 		fmt.Fprintf(&b, "The layer stays at rest. Its Rayleigh number, %.3g, is %.3g of the critical one, %.4g.\n",
 			v.Rayleigh, v.Ratio, v.Critical)
 	}
+	sets := "would set"
+	if v.Convects {
+		sets = "sets"
+	}
 	switch {
 	case v.Onset.LongWave():
-		b.WriteString("Convection sets in with rolls as wide as the layer allows.\n")
+		fmt.Fprintf(&b, "Convection %s in with rolls as wide as the layer allows.\n", sets)
 	case v.Rolls > 0:
-		fmt.Fprintf(&b, "Convection sets in with %s.\n", count(v.Rolls, "roll"))
+		fmt.Fprintf(&b, "Convection %s in with %s.\n", sets, count(v.Rolls, "roll"))
 	default:
-		fmt.Fprintf(&b, "Convection sets in at a wavelength of %.3g m, two rolls.\n", v.Wavelength.In(units.Metre))
+		fmt.Fprintf(&b, "Convection %s in at a wavelength of %.3g m, two rolls.\n", sets, v.Wavelength.In(units.Metre))
 	}
 	if v.GrowthTime > 0 {
 		fmt.Fprintf(&b, "What grows fastest has a wavelength of %.3g m, and grows by a factor e in %s.\n",
