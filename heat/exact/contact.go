@@ -24,6 +24,9 @@ func (s Contact) profile(z, t float64) (float64, float64) {
 	return HalfSpace{s.Upper, s.UpperInitial, s.Interface()}.profile(z, t)
 }
 
+// Solve implements [Problem].
+func (s Contact) Solve() (Solution, error) { return checked(s) }
+
 // At implements [Solution].
 func (s Contact) At(x, z, t float64) State { return along(s, x, z, t) }
 
@@ -41,9 +44,9 @@ func (s Contact) Domain() Domain { return plane(0) }
 // Validate implements [Solution].
 func (s Contact) Validate() error {
 	return first(
-		s.Lower.check("Lower of Contact"),
-		s.Upper.check("Upper of Contact"),
-		anyFinite("LowerInitial of Contact", s.LowerInitial),
-		anyFinite("UpperInitial of Contact", s.UpperInitial),
+		s.Lower.check("Contact.Lower"),
+		s.Upper.check("Contact.Upper"),
+		anyFinite("Contact.LowerInitial", s.LowerInitial),
+		anyFinite("Contact.UpperInitial", s.UpperInitial),
 	)
 }

@@ -39,10 +39,10 @@ func scaledErfc(x float64) float64 {
 		square := x * x
 		return math.Exp(square) * (1 + math.FMA(x, x, -square)) * math.Erfc(x)
 	}
-	// Asymptotic series 1 − 1/2x² + 1·3/(2x²)² − …; at 26 the sixth term is
-	// below rounding.
+	// Asymptotic series 1 − y + 3y² − 15y³ + …, y = 1/2x². From 26 on the
+	// term after these is below rounding.
 	y := 1 / (2 * x * x)
-	return (1 - y*(1-3*y*(1-5*y*(1-7*y*(1-9*y))))) / (x * sqrtPi)
+	return (1 - y*(1-3*y*(1-5*y*(1-7*y*(1-9*y*(1-11*y)))))) / (x * sqrtPi)
 }
 
 // erfcTimesExp returns exp(x² − a²) erfc(x), where a² ≤ x² would let the two

@@ -9,21 +9,21 @@ func positive(name string, v float64) error {
 	if v > 0 && v < far {
 		return nil
 	}
-	return fmt.Errorf("heat/exact: %s is %g, want finite and > 0", name, v)
+	return fmt.Errorf("exact: %s is %g, want finite and > 0", name, v)
 }
 
 func notNegative(name string, v float64) error {
 	if v >= 0 && v < far {
 		return nil
 	}
-	return fmt.Errorf("heat/exact: %s is %g, want finite and >= 0", name, v)
+	return fmt.Errorf("exact: %s is %g, want finite and >= 0", name, v)
 }
 
 func anyFinite(name string, v float64) error {
 	if v > -far && v < far {
 		return nil
 	}
-	return fmt.Errorf("heat/exact: %s is %g, want a finite number", name, v)
+	return fmt.Errorf("exact: %s is %g, want a finite number", name, v)
 }
 
 // first returns the first error that is not nil.

@@ -25,6 +25,9 @@ func (s Gaussian) state(x, z, t float64) State {
 	}.at(x, z)
 }
 
+// Solve implements [Problem].
+func (s Gaussian) Solve() (Solution, error) { return checked(s) }
+
 // At implements [Solution].
 func (s Gaussian) At(x, z, t float64) State { return inside(s, x, z, t) }
 
@@ -42,8 +45,8 @@ func (s Gaussian) Domain() Domain { return plane(0) }
 func (s Gaussian) Validate() error {
 	return first(
 		checkSpot("Gaussian", s.Material, s.Amplitude, s.Width, s.X, s.Z),
-		anyFinite("VX of Gaussian", s.VX),
-		anyFinite("VZ of Gaussian", s.VZ),
+		anyFinite("Gaussian.VX", s.VX),
+		anyFinite("Gaussian.VZ", s.VZ),
 	)
 }
 
@@ -67,6 +70,9 @@ func (s GaussianRotation) state(x, z, t float64) State {
 	}.at(x, z)
 }
 
+// Solve implements [Problem].
+func (s GaussianRotation) Solve() (Solution, error) { return checked(s) }
+
 // At implements [Solution].
 func (s GaussianRotation) At(x, z, t float64) State { return inside(s, x, z, t) }
 
@@ -84,7 +90,7 @@ func (s GaussianRotation) Domain() Domain { return plane(0) }
 func (s GaussianRotation) Validate() error {
 	return first(
 		checkSpot("GaussianRotation", s.Material, s.Amplitude, s.Width, s.X, s.Z),
-		anyFinite("Rate of GaussianRotation", s.Rate),
+		anyFinite("GaussianRotation.Rate", s.Rate),
 	)
 }
 
@@ -111,6 +117,9 @@ func (s GaussianShear) state(x, z, t float64) State {
 	}.at(x, z)
 }
 
+// Solve implements [Problem].
+func (s GaussianShear) Solve() (Solution, error) { return checked(s) }
+
 // At implements [Solution].
 func (s GaussianShear) At(x, z, t float64) State { return inside(s, x, z, t) }
 
@@ -128,86 +137,6 @@ func (s GaussianShear) Domain() Domain { return plane(0) }
 func (s GaussianShear) Validate() error {
 	return first(
 		checkSpot("GaussianShear", s.Material, s.Amplitude, s.Width, s.X, s.Z),
-		anyFinite("Rate of GaussianShear", s.Rate),
-	)
-}
-
-// LineSource is heat set free at t = 0 on a line through the plane:
-//
-//	T = Heat/(4πkt) exp(−r²/(4κt))
-//
-// with r the distance from (X, Z) (Carslaw & Jaeger 1959, 10.3; section from
-// memory).
-type LineSource struct {
-	Material
-	Heat float64 // per length of the line; default 1
-	X, Z float64 // place of the line
-}
-
-func (s LineSource) state(x, z, t float64) State {
-	if t == 0 {
-		if x == s.X && z == s.Z {
-			return nowhere
-		}
-		return State{}
-	}
-	return spot{
-		material: s.Material, heat: orOne(s.Heat) / (2 * math.Pi * s.capacity()),
-		x: s.X, z: s.Z, spread: isotropic(0, s.Diffusivity()*t),
-	}.at(x, z)
-}
-
-// At implements [Solution]. At t = 0 the line itself has no temperature: NaN.
-func (s LineSource) At(x, z, t float64) State { return inside(s, x, z, t) }
-
-// Medium implements [Solution].
-func (s LineSource) Medium(_, _, _ float64) Medium { return s.medium() }
-
-// Domain implements [Solution]: the plane, t ≥ 0.
-func (s LineSource) Domain() Domain { return plane(0) }
-
-// Validate implements [Solution].
-func (s LineSource) Validate() error {
-	return checkSpot("LineSource", s.Material, s.Heat, 0, s.X, s.Z)
-}
-
-// A spot has a Gaussian temperature whose integral over the plane is 2π·heat.
-type spot struct {
-	material Material
-	heat     float64
-	x, z     float64
-	spread   moments
-}
-
-// moments are the second moments of a spot about its centre.
-type moments struct{ xx, xz, zz float64 }
-
-func isotropic(width, kt float64) moments {
-	v := width*width + 2*kt
-	return moments{xx: v, zz: v}
-}
-
-func (s spot) at(x, z float64) State {
-	dx, dz := x-s.x, z-s.z
-	determinant := s.spread.xx*s.spread.zz - s.spread.xz*s.spread.xz
-	// Components of −∇T/T: the inverse of the moments times the distance.
-	gx := (s.spread.zz*dx - s.spread.xz*dz) / determinant
-	gz := (s.spread.xx*dz - s.spread.xz*dx) / determinant
-	temperature := s.heat / math.Sqrt(determinant) * math.Exp(-(gx*dx+gz*dz)/2)
-	k := s.material.conductivity()
-	return State{Temperature: temperature, FluxX: k * gx * temperature, FluxZ: k * gz * temperature}
-}
-
-func checkSpot(of string, m Material, strength, width, x, z float64) error {
-	name := "Amplitude of "
-	if of == "LineSource" {
-		name = "Heat of "
-	}
-	return first(
-		m.check(of),
-		anyFinite(name+of, strength),
-		notNegative("Width of "+of, width),
-		anyFinite("X of "+of, x),
-		anyFinite("Z of "+of, z),
+		anyFinite("GaussianShear.Rate", s.Rate),
 	)
 }

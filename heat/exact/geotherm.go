@@ -19,6 +19,9 @@ func (s Geotherm) profile(z, _ float64) (float64, float64) {
 	return s.Surface + z*(s.HeatFlow-s.Source*z/2)/s.conductivity(), s.Source*z - s.HeatFlow
 }
 
+// Solve implements [Problem].
+func (s Geotherm) Solve() (Solution, error) { return checked(s) }
+
 // At implements [Solution]. FluxZ is negative where heat rises to the surface.
 func (s Geotherm) At(x, z, t float64) State { return along(s, x, z, t) }
 
@@ -36,9 +39,9 @@ func (s Geotherm) Domain() Domain { return above(forever) }
 func (s Geotherm) Validate() error {
 	return first(
 		s.check("Geotherm"),
-		anyFinite("Surface of Geotherm", s.Surface),
-		anyFinite("HeatFlow of Geotherm", s.HeatFlow),
-		anyFinite("Source of Geotherm", s.Source),
+		anyFinite("Geotherm.Surface", s.Surface),
+		anyFinite("Geotherm.HeatFlow", s.HeatFlow),
+		anyFinite("Geotherm.Source", s.Source),
 	)
 }
 
@@ -68,6 +71,9 @@ func (s GeothermExponential) profile(z, _ float64) (float64, float64) {
 	return temperature, -s.MantleFlow - s.Source*h*math.Exp(-z/h)
 }
 
+// Solve implements [Problem].
+func (s GeothermExponential) Solve() (Solution, error) { return checked(s) }
+
 // At implements [Solution]. FluxZ is negative where heat rises to the surface.
 func (s GeothermExponential) At(x, z, t float64) State { return along(s, x, z, t) }
 
@@ -85,9 +91,9 @@ func (s GeothermExponential) Domain() Domain { return above(forever) }
 func (s GeothermExponential) Validate() error {
 	return first(
 		s.check("GeothermExponential"),
-		anyFinite("Surface of GeothermExponential", s.Surface),
-		anyFinite("MantleFlow of GeothermExponential", s.MantleFlow),
-		anyFinite("Source of GeothermExponential", s.Source),
-		notNegative("Depth of GeothermExponential", s.Depth),
+		anyFinite("GeothermExponential.Surface", s.Surface),
+		anyFinite("GeothermExponential.MantleFlow", s.MantleFlow),
+		anyFinite("GeothermExponential.Source", s.Source),
+		notNegative("GeothermExponential.Depth", s.Depth),
 	)
 }

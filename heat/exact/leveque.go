@@ -48,6 +48,9 @@ func (s Leveque) state(x, z, _ float64) State {
 	}
 }
 
+// Solve implements [Problem].
+func (s Leveque) Solve() (Solution, error) { return checked(s) }
+
 // At implements [Solution].
 func (s Leveque) At(x, z, t float64) State { return inside(s, x, z, t) }
 
@@ -65,8 +68,8 @@ func (s Leveque) Domain() Domain { return Domain{0, far, 0, far, forever} }
 func (s Leveque) Validate() error {
 	return first(
 		s.check("Leveque"),
-		notNegative("Shear of Leveque", s.Shear),
-		anyFinite("Wall of Leveque", s.Wall),
-		anyFinite("Far of Leveque", s.Far),
+		notNegative("Leveque.Shear", s.Shear),
+		anyFinite("Leveque.Wall", s.Wall),
+		anyFinite("Leveque.Far", s.Far),
 	)
 }

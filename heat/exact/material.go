@@ -27,7 +27,7 @@ func (m Material) medium() Medium {
 
 func (m Material) check(of string) error {
 	return first(
-		notNegative("Conductivity of "+of, m.Conductivity),
-		notNegative("HeatCapacity of "+of, m.HeatCapacity),
+		notNegative(of+".Conductivity", m.Conductivity),
+		notNegative(of+".HeatCapacity", m.HeatCapacity),
 	)
 }

@@ -82,6 +82,9 @@ func (s SlabRobin) late(zeta, tau float64) (theta, slope float64) {
 	return theta, slope
 }
 
+// Solve implements [Problem].
+func (s SlabRobin) Solve() (Solution, error) { return checked(s) }
+
 // At implements [Solution].
 func (s SlabRobin) At(x, z, t float64) State { return along(s, x, z, t) }
 
@@ -95,9 +98,9 @@ func (s SlabRobin) Domain() Domain { return layer(orOne(s.Thickness), 0) }
 func (s SlabRobin) Validate() error {
 	return first(
 		s.check("SlabRobin"),
-		notNegative("Thickness of SlabRobin", s.Thickness),
-		anyFinite("Initial of SlabRobin", s.Initial),
-		anyFinite("Ambient of SlabRobin", s.Ambient),
-		notNegative("Coefficient of SlabRobin", s.Coefficient),
+		notNegative("SlabRobin.Thickness", s.Thickness),
+		anyFinite("SlabRobin.Initial", s.Initial),
+		anyFinite("SlabRobin.Ambient", s.Ambient),
+		notNegative("SlabRobin.Coefficient", s.Coefficient),
 	)
 }

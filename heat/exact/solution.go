@@ -1,9 +1,36 @@
 package exact
 
-import (
-	"fmt"
-	"math"
-)
+import "math"
+
+// A Solution is a temperature field that satisfies
+//
+//	C (∂T/∂t + v·∇T) = ∇·(k ∇T) + Source
+//
+// exactly. Solutions do not change and are safe for concurrent use.
+type Solution interface {
+	// At returns temperature and flux. Outside the domain of the solution
+	// all three numbers are NaN. A steady solution does not look at t.
+	At(x, z, t float64) State
+
+	// Medium returns the coefficients of the equation.
+	Medium(x, z, t float64) Medium
+
+	// Domain returns where and from when on the solution holds.
+	Domain() Domain
+
+	// Validate returns an error that names the first parameter that makes no
+	// sense, its value and what is allowed; nil for a Solution that a
+	// Problem returned.
+	Validate() error
+}
+
+// A Problem is a set of parameters that has an exact solution. Solve fails if
+// a parameter makes no sense. The problems of this package are Solutions
+// themselves, which may be used without Solve once Validate has returned nil;
+// what Solve returns has the constants computed that must be found first.
+type Problem interface {
+	Solve() (Solution, error)
+}
 
 // A State is the temperature at a point and a time, and the heat that is
 // conducted there per area and time: −k∇T by components.
@@ -27,58 +54,12 @@ func (d Domain) Contains(x, z, t float64) bool {
 	return x >= d.Left && x <= d.Right && z >= d.Bottom && z <= d.Top && t >= d.Start
 }
 
-// A Solution is a temperature field that satisfies
-//
-//	C (∂T/∂t + v·∇T) = ∇·(k ∇T) + Source
-//
-// exactly. Solutions are values: their methods change nothing and may be called
-// by many goroutines.
-type Solution interface {
-	// At returns temperature and flux. Outside the domain of the solution
-	// all three numbers are NaN. A steady solution does not look at t.
-	At(x, z, t float64) State
-
-	// Medium returns the coefficients of the equation.
-	Medium(x, z, t float64) Medium
-
-	// Domain returns where and from when on the solution holds.
-	Domain() Domain
-
-	// Validate returns an error that names the first field that makes no
-	// sense, its value and what is allowed. At means nothing before it
-	// returned nil.
-	Validate() error
-}
-
-// TemperatureTo fills dst with the temperatures of a solution at the points of
-// a rectangular grid: dst[k*len(x)+i] at x[i], z[k]. A point outside the domain
-// is an error.
-func TemperatureTo(dst []float64, s Solution, x, z []float64, t float64) error {
-	if err := s.Validate(); err != nil {
-		return err
-	}
-	if len(dst) != len(x)*len(z) {
-		return fmt.Errorf("heat/exact: dst has %d values, want %d times %d", len(dst), len(x), len(z))
-	}
-	d := s.Domain()
-	for k, zk := range z {
-		row := dst[k*len(x):][:len(x)]
-		for i, xi := range x {
-			if !d.Contains(xi, zk, t) {
-				return fmt.Errorf("heat/exact: (%g, %g) at time %g is outside the domain %+v of %T", xi, zk, t, d, s)
-			}
-			row[i] = s.At(xi, zk, t).Temperature
-		}
-	}
-	return nil
-}
-
 var (
 	forever = math.Inf(-1) // start of a domain without beginning
 	far     = math.Inf(1)  // end of a domain without end
 )
 
-// plane, above and layer are the usual domains.
+// plane, above, layer and rectangle are the usual domains.
 
 func plane(start float64) Domain { return Domain{-far, far, -far, far, start} }
 
@@ -86,10 +67,18 @@ func above(start float64) Domain { return Domain{-far, far, 0, far, start} }
 
 func layer(thickness, start float64) Domain { return Domain{-far, far, 0, thickness, start} }
 
-func box(width, height, start float64) Domain { return Domain{0, width, 0, height, start} }
+func rectangle(width, height, start float64) Domain { return Domain{0, width, 0, height, start} }
 
 // nowhere is the state outside a domain.
 var nowhere = State{math.NaN(), math.NaN(), math.NaN()}
+
+// checked returns a solution that has good parameters.
+func checked(s Solution) (Solution, error) {
+	if err := s.Validate(); err != nil {
+		return nil, err
+	}
+	return s, nil
+}
 
 // A column is a solution that depends on z and t only.
 type column interface {
