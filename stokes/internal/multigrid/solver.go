@@ -52,14 +52,14 @@ type Solver struct {
 // plateau is the end of convergence.
 const (
 	shortBasis   = 5
-	goodProgress = 0.03
+	goodProgress = 1e-3
 )
 
 // A new q of which less than lossOfAngle, in square, is new is orthogonalised
-// twice; one of which less than parallel is new ends the round.
+// twice; one of which less than parallel is new is rounding and ends the round.
 const (
 	lossOfAngle = 1e-2
-	parallel    = 1e-14
+	parallel    = 1e-26
 )
 
 // NewSolver makes a solver for the grid of x and z.
@@ -213,20 +213,19 @@ func (sv *Solver) iterate() (float64, bool) {
 	}
 	clear(sv.beta[k*m:][:k])
 	t := sv.total(k + 2)
-	rest, ok := sv.orthogonalise(t)
-	if !ok {
-		return 0, false
-	}
-	if rest < lossOfAngle*t[k] {
+	whole := t[k]
+	rest := sv.orthogonalise(t)
+	if !(rest > lossOfAngle*whole) {
 		// Most of q was in the span of the others and what is left is
 		// inaccurate: take its parts out once more.
 		sv.step = 0
 		sv.run(0, sv.updatePass)
 		sv.run(0, sv.dotPass)
 		t = sv.total(k + 2)
-		if rest, ok = sv.orthogonalise(t); !ok {
-			return 0, false
-		}
+		rest = sv.orthogonalise(t)
+	}
+	if !(rest > parallel*whole) {
+		return 0, false
 	}
 	sv.norm[k] = rest
 	sv.step = t[k+1] / rest
@@ -238,8 +237,8 @@ func (sv *Solver) iterate() (float64, bool) {
 
 // orthogonalise turns the inner products of q[k] with the earlier q into
 // coefficients, for updatePass to use, and returns the square of what will be
-// left of q, or false when that is nothing but rounding.
-func (sv *Solver) orthogonalise(t []float64) (float64, bool) {
+// left of q.
+func (sv *Solver) orthogonalise(t []float64) float64 {
 	k, m := sv.k, len(sv.z)
 	rest := t[k]
 	for i := range k {
@@ -248,7 +247,7 @@ func (sv *Solver) orthogonalise(t []float64) (float64, bool) {
 		sv.beta[k*m+i] += b
 		rest -= b * t[i]
 	}
-	return rest, rest > parallel*t[k]
+	return rest
 }
 
 // combine adds to X the directions of this round. The orthogonalised

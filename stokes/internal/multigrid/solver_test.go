@@ -73,3 +73,46 @@ func TestSlowConvergenceGrowsTheBasis(t *testing.T) {
 	p.solve(t)
 	require.Len(t, p.sv.z, shortBasis)
 }
+
+func TestNormsOfTheResidual(t *testing.T) {
+	p := newProblem(box{hx: []float64{1, 2, 3}, hz: []float64{1, 4}, bot: Stick}, func(x, z float64) float64 { return 1 + x })
+	sv, l := p.sv, p.sv.Finest()
+	sv.X.X[1*l.stride+2], sv.X.Z[2*l.stride+3] = 0.3, -0.7
+	got := sv.Residual(p)
+	var want Norms
+	for j := 1; j <= 2; j++ {
+		for i := 1; i <= 3; i++ {
+			c := j*l.stride + i
+			rx, rz, rp := sv.R.X[c], sv.R.Z[c], sv.R.P[c]
+			volume := l.X.H[i] * l.Z.H[j]
+			want.Weighted += rx*rx*l.ix[c] + rz*rz*l.iz[c] + rp*rp*l.Eta[c]/volume
+			want.Momentum += rx*rx/(l.X.D[i]*l.Z.H[j]) + rz*rz/(l.X.H[i]*l.Z.D[j])
+			want.Continuity += rp * rp / volume
+		}
+	}
+	require.InEpsilon(t, math.Sqrt(want.Weighted), got.Weighted, 1e-13)
+	require.InEpsilon(t, math.Sqrt(want.Momentum), got.Momentum, 1e-13)
+	require.InEpsilon(t, math.Sqrt(want.Continuity), got.Continuity, 1e-13)
+}
+
+// The residual that the iteration carries along is the true one, with the
+// operator behind the last sweep and, where there are jumps, by itself; also
+// on a grid that is solved directly as a whole.
+func TestRecursiveResidualIsTheTrueOne(t *testing.T) {
+	for name, p := range map[string]*problem{
+		"smooth":    newProblem(box{hx: equal(30, 1), hz: equal(70, 2), bot: Stick, top: Stick, workers: 2}, exponential(1e3)),
+		"jumps":     newProblem(box{hx: equal(30, 1), hz: equal(70, 2), bot: Stick, top: Stick, workers: 2}, circles(100)),
+		"one level": newProblem(box{hx: equal(4, 1), hz: equal(4, 1), bot: Stick}, exponential(10)),
+	} {
+		p.sv.X.clear()
+		rest := p.sv.Residual(p).Weighted
+		var last float64
+		norms, n, err := p.sv.Solve(context.Background(), p, Limits{Target: 1e-6 * rest, Iterations: 20, Basis: 20,
+			Watch: func(_ int, r float64) { last = r }})
+		require.NoError(t, err)
+		require.InDelta(t, last, norms.Weighted, 1e-10*rest, name)
+		if name == "one level" {
+			require.Equal(t, 1, n)
+		}
+	}
+}
