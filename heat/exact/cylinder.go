@@ -1,6 +1,9 @@
 package exact
 
-import "math"
+import (
+	"math"
+	"sync"
+)
 
 // Cylinder is a long cylinder about the origin of the plane, at first of one
 // temperature, whose surface is held at another from t = 0 on (Carslaw & Jaeger
@@ -44,17 +47,29 @@ func (s Cylinder) state(x, z, t float64) State {
 
 // lateCylinder sums the harmonics until they are below rounding.
 func lateCylinder(rho, tau float64) (theta, slope float64) {
-	for n := 1; ; n++ {
-		j := besselZero(n)
-		decay := math.Exp(-j * j * tau)
-		amplitude := 2 * decay / (j * math.J1(j))
-		theta += amplitude * math.J0(j*rho)
-		slope -= amplitude * j * math.J1(j*rho)
-		if j*j*tau > 42 {
-			return theta, slope
+	for _, h := range cylinderHarmonics() {
+		amplitude := 2 * math.Exp(-h.zero*h.zero*tau) / h.slope
+		theta += amplitude / h.zero * math.J0(h.zero*rho)
+		slope -= amplitude * math.J1(h.zero*rho)
+		if h.zero*h.zero*tau > 42 {
+			break
 		}
 	}
+	return theta, slope
 }
+
+// A harmonic is a zero of J₀ with the value of J₁ there.
+type harmonic struct{ zero, slope float64 }
+
+// cylinderHarmonics are enough for times from earlyCylinder on.
+var cylinderHarmonics = sync.OnceValue(func() []harmonic {
+	all := make([]harmonic, 104)
+	for i := range all {
+		j := besselZero(i + 1)
+		all[i] = harmonic{j, math.J1(j)}
+	}
+	return all
+})
 
 // besselZero returns zero number n = 1, 2, … of J₀: McMahon's expansion and
 // three steps of Newton's method.

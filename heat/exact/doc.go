@@ -50,8 +50,8 @@
 // times, it gives way to one of images, so that a few terms reach rounding at
 // any time; products of large exponentials and small error functions are
 // evaluated together. Nothing overflows at large Péclet or Biot numbers. At
-// allocates nothing and costs some tens to hundreds of nanoseconds, tens of
-// microseconds in the young cylinder.
+// allocates nothing and costs from some tens of nanoseconds to a few
+// microseconds, or ten in a cylinder that is young.
 //
 // Section numbers of Carslaw & Jaeger (1959, Conduction of Heat in Solids) are
 // from memory; the tests substitute each formula into the equation.

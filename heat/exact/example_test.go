@@ -58,7 +58,7 @@ func ExampleThroughflow() {
 	}
 	// Output:
 	// Pe    0: T = 0.9 at z = 0.9
-	// Pe    5: T = 0.603 at z = 0.9
+	// Pe    5: T = 0.604 at z = 0.9
 	// Pe 1000: T = 3.72e-44 at z = 0.9
 }
 
@@ -74,9 +74,9 @@ func ExampleAll() {
 		}
 	}
 	// Output:
-	// 16 cells: error 1.0e-03
-	// 32 cells: error 2.6e-04
-	// 64 cells: error 6.5e-05
+	// 16 cells: error 9.5e-04
+	// 32 cells: error 2.4e-04
+	// 64 cells: error 6.1e-05
 }
 
 // errorOfDifferences marches a column of n intervals from Start to End and

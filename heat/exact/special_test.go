@@ -62,6 +62,12 @@ func TestBesselZeros(t *testing.T) {
 	}
 }
 
+// The harmonics of the cylinder suffice at the earliest time that needs them.
+func TestCylinderHasEnoughHarmonics(t *testing.T) {
+	all := cylinderHarmonics()
+	assert.Greater(t, all[len(all)-1].zero*all[len(all)-1].zero*earlyCylinder, 42.0)
+}
+
 // Each root lies in its interval and satisfies β sin β = Bi cos β to rounding.
 func TestBiotRoots(t *testing.T) {
 	for bi := 1e-14; bi < 1e15; bi *= 10 {
