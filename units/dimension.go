@@ -102,7 +102,7 @@ func power(e float64) string {
 	if n*100%q == 0 {
 		return "^" + strconv.FormatFloat(e, 'f', -1, 64)
 	}
-	for _, f := range []int{2, 2, 3, 5, 5} { // whose product is exponentGrain
+	for _, f := range []int{2, 2, 5, 5} { // no 3, or it would be in hundredths
 		if n%f == 0 && q%f == 0 {
 			n, q = n/f, q/f
 		}

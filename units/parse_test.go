@@ -232,6 +232,9 @@ func TestParseErrors(t *testing.T) {
 		{"1_000 km", units.ErrUnknownUnit, 1, "_", "known"},
 		{"5 ± 1 km", units.ErrSyntax, 2, "±", "a unit"},
 		{"6.67(15) km", units.ErrSyntax, 5, "1", "a unit"},
+		{"10^- km", units.ErrSyntax, 2, "^", "a unit"},
+		{"5×10^- km", units.ErrSyntax, 1, "×", "a unit"},
+		{"10⁻ km", units.ErrSyntax, 2, "⁻", "a unit"},
 		{"5 km/", units.ErrSyntax, 5, "", "a unit"},
 		{"5 /", units.ErrSyntax, 3, "", "a unit"},
 		{"5 km//s", units.ErrSyntax, 5, "/", "a unit"},
@@ -272,7 +275,7 @@ func TestParseErrors(t *testing.T) {
 		{"5 kkg", units.ErrUnknownUnit, 2, "kkg", "known"},
 		{"5 kd", units.ErrUnknownUnit, 2, "kd", "known"}, // UCUM: no prefix
 		{"5 ma", units.ErrUnknownUnit, 2, "ma", "known"},
-		{"5 mdegC", units.ErrUnknownUnit, 2, "mdegC", "known"},
+		{"5 mdegC", units.ErrUnknownUnit, 2, "mdegC", `"m degC"`},
 		{"5 Dm", units.ErrUnknownUnit, 2, "Dm", "known"},
 		{"5 daD", units.ErrUnknownUnit, 2, "daD", "known"},
 		{"5 k", units.ErrUnknownUnit, 2, "k", "known"},
@@ -314,7 +317,8 @@ func TestParseErrors(t *testing.T) {
 		{"5 (((ppb^100)^100)^100)", units.ErrRange, 4, "(", "exponents"},
 	}
 	for _, tt := range tests {
-		_, err := units.Parse[units.Length](tt.text)
+		q, err := units.Parse[units.Length](tt.text)
+		assert.Zero(t, q, "%q", tt.text)
 		e, ok := errors.AsType[*units.ParseError](err)
 		if !assert.True(t, ok, "%q: %v", tt.text, err) {
 			continue
@@ -352,6 +356,15 @@ func TestDimensionErrors(t *testing.T) {
 	}
 }
 
+// An error repeats the first 80 bytes of a text.
+func TestErrorsStayShort(t *testing.T) {
+	text := "1 " + strings.Repeat("x", 78)
+	_, err := units.Parse[units.Length](text)
+	assert.ErrorContains(t, err, fmt.Sprintf("units: %q at", text))
+	_, err = units.Parse[units.Length](text + "x")
+	assert.ErrorContains(t, err, fmt.Sprintf("units: %q… at", text))
+}
+
 // Long and deep texts are errors, not work.
 func TestHostileTexts(t *testing.T) {
 	const deep = 1000
@@ -385,6 +398,9 @@ func TestHostileTexts(t *testing.T) {
 	assert.NoError(t, err)
 	_, err = units.Parse[units.Length](strings.Repeat("0", 4095) + " m")
 	assert.ErrorIs(t, err, units.ErrSyntax)
+	e, _ := errors.AsType[*units.ParseError](err)
+	assert.Equal(t, 4097, e.Pos)
+	assert.Empty(t, e.Found)
 
 	// The largest powers of everything at once.
 	for _, text := range []string{"Qm^100", "qm^-100", "deg^100/(yr^100 s^-100)", "(cal/erg)^100 (eV/erg)^100 (lb/kg)^100"} {

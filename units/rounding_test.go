@@ -65,7 +65,7 @@ func randomNumber(rnd *rand.Rand) string {
 		b.WriteByte(byte('0' + rnd.IntN(10)))
 	}
 	if rnd.IntN(2) == 0 {
-		fmt.Fprintf(&b, "e%d", rnd.IntN(60)-30)
+		fmt.Fprintf(&b, "e%d", rnd.IntN(180)-90)
 	}
 	return b.String()
 }
