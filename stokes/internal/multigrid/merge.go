@@ -33,13 +33,14 @@ type merge struct {
 // than spreadLimit times its own thinnest. Where that would leave more than
 // leastShrink of the cells, both limits rise. Faster coarsening of graded grids
 // costs iterations: with leastShrink 0.75 up to three times as many, growing
-// with the size.
+// with the size. So does coarsening a layer of variable viscosity down to two
+// rows: up to three times as many in a wide box.
 const (
 	aspectLimit = 1.5
 	spreadLimit = 2.0
 	leastShrink = 0.95
 	limitGrowth = 1.5
-	fewestCells = 2 // an axis is never coarsened below
+	fewestCells = 4 // an axis is not coarsened below
 )
 
 // coarsen chooses the merges of both axes such that the thinnest cells become
@@ -66,7 +67,7 @@ func coarsen(x, z *Axis) (mx, mz *merge, ok bool) {
 // thinnest returns the smallest width of an axis that can be coarsened, else
 // infinity.
 func (a *Axis) thinnest() float64 {
-	if a.N <= fewestCells {
+	if a.N < 2*fewestCells {
 		return math.Inf(1)
 	}
 	return slices.Min(a.widths())
@@ -75,7 +76,7 @@ func (a *Axis) thinnest() float64 {
 // groups returns the numbers of cells of a that make up each coarse cell, when
 // the thinnest cell of both axes is given and the limits are raised by f.
 func (a *Axis) groups(thinnest, f float64) []int {
-	limit := 0.0
+	limit := 0.0 // merge nothing
 	if h := a.thinnest(); h <= aspectLimit*f*thinnest {
 		limit = spreadLimit * f * h
 	}
@@ -100,9 +101,6 @@ func groups(h []float64, limit float64) []int {
 		}
 		counts = append(counts, pairUp(h[i:i+run])...)
 		i += run
-	}
-	if n <= fewestCells || len(counts) < fewestCells {
-		return halves(n)
 	}
 	return counts
 }
@@ -137,19 +135,6 @@ func pairUp(h []float64) []int {
 const sameWidth = 1e-9
 
 func abs(i int) int { return max(i, -i) }
-
-// halves splits up to four cells into two coarse ones, and leaves up to two
-// alone.
-func halves(n int) []int {
-	switch n {
-	case 1:
-		return []int{1}
-	case 2:
-		return []int{1, 1}
-	default:
-		return []int{n / 2, n - n/2}
-	}
-}
 
 func newMerge(fine *Axis, count []int) *merge {
 	n := len(count)

@@ -31,6 +31,21 @@ func TestIterations(t *testing.T) {
 	}
 }
 
+// Wide layers of strongly variable viscosity: the cycle amplifies a few modes,
+// which the basis must not forget.
+func TestWideBoxes(t *testing.T) {
+	for _, b := range []box{
+		{hx: equal(320, 10), hz: equal(32, 1)},
+		{hx: equal(512, 8), hz: equal(64, 1), sides: Wrap, bot: Stick, top: Stick},
+		{hx: equal(64, 10), hz: equal(40, 1), bot: Stick},
+	} {
+		n, norms := newProblem(b, exponential(1e8)).solve(t)
+		t.Logf("%dx%d: %d iterations", len(b.hx), len(b.hz), n)
+		require.LessOrEqual(t, norms.Weighted, 1e-8)
+		require.LessOrEqual(t, n, 16)
+	}
+}
+
 // The cycle converges by itself on uniform viscosity, at less than 0.25 a
 // cycle (0.16 on fine grids).
 func TestCycleConvergesAlone(t *testing.T) {
