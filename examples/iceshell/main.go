@@ -20,6 +20,7 @@ import (
 	"example.org/overturn/boussinesq"
 	"example.org/overturn/boussinesq/convection"
 	"example.org/overturn/heat"
+	"example.org/overturn/stability"
 	"example.org/overturn/stokes/rheology"
 	"example.org/overturn/stokes/staggered"
 	"example.org/overturn/units"
@@ -93,9 +94,17 @@ func beforehand() error {
 	}
 	fmt.Printf("Rayleigh number %.2g, from %.2g to %.2g; what matters most is the %s\n",
 		ra.Best, ra.Low, ra.High, strings.ToLower(sample.Influences()[0].Parameter))
-	for _, walls := range onsets {
-		fmt.Printf("  between %-9s walls it convects above %6.1f: probability %.0f %%\n",
-			walls.name, walls.critical, 100*sample.Above(walls.critical))
+	gamma, err := thermalExponent()
+	if err != nil {
+		return err
+	}
+	for _, wall := range []stability.Wall{stability.Free, stability.Rigid} {
+		onset, err := stability.Layer{Bottom: wall, Top: wall, Viscosity: stability.Exponential(gamma, 0.5)}.Critical()
+		if err != nil {
+			return err
+		}
+		fmt.Printf("  between %-5v walls it convects above %6.1f, in rolls %.0f km wide: probability %.0f %%\n", wall,
+			onset.Rayleigh, onset.Wavelength/2*l.Depth.In(units.Kilometre), 100*sample.Above(onset.Rayleigh))
 	}
 	criteria, err := ithyra.Layer.Validity()
 	if err != nil {
@@ -109,13 +118,10 @@ func beforehand() error {
 	return nil
 }
 
-// onsets are critical Rayleigh numbers of uniform viscosity.
-var onsets = []struct {
-	name     string
-	critical float64
-}{
-	{"free-slip", 657.511}, // 27π⁴/4, Rayleigh (1916)
-	{"no-slip", 1707.762},  // Chandrasekhar (1961, ch. II), from memory
+// thermalExponent returns the logarithm of the viscosity contrast of the best
+// values. The viscosity of the material is that in the middle of the range.
+func thermalExponent() (float64, error) {
+	return ithyra.Layer.FrankKamenetskii(activationEnergy, ithyra.Layer.Material.ReferenceTemperature)
 }
 
 // simulate runs the best values until heat flow and speed have settled, and
@@ -129,12 +135,11 @@ func simulate(ctx context.Context) (*convection.Model, averages, error) {
 	if err != nil {
 		return nil, averages{}, err
 	}
-	contrast, err := ithyra.Layer.FrankKamenetskii(activationEnergy, ithyra.Layer.Material.ReferenceTemperature)
+	gamma, err := thermalExponent()
 	if err != nil {
 		return nil, averages{}, err
 	}
-	// The viscosity of the material is that in the middle of the range.
-	p.Viscosity = rheology.FrankKamenetskii{ThermalExponent: contrast, ReferenceTemperature: 0.5}
+	p.Viscosity = rheology.FrankKamenetskii{ThermalExponent: gamma, ReferenceTemperature: 0.5}
 	const end = 0.12
 	m, err := convection.New(p, &convection.Settings{
 		EndTime: end, Courant: 0.9, Every: 10, Heat: &heat.Settings{Advection: heat.Bounded},
