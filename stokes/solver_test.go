@@ -553,6 +553,50 @@ func TestTransformAgreesWithMultigrid(t *testing.T) {
 	}
 }
 
+func TestTransformReports(t *testing.T) {
+	g := uniform(t, 96, 200, 1, 1)
+	_, force := plume(g, 1)
+	_, r := solve(t, g, stokes.Walls{}, nil, force, &stokes.Settings{Tolerance: 1e-11})
+	require.Equal(t, stokes.Transform, r.Method)
+	require.Greater(t, r.Iterations, 1, "refined")
+	require.Len(t, r.Residuals, r.Iterations+1)
+	require.Equal(t, 1.0, r.Residuals[0])
+	require.Equal(t, r.Residual, r.Residuals[r.Iterations])
+	ctx, cancel := context.WithCancel(context.Background())
+	cancel()
+	sv, err := stokes.NewSolver(g, stokes.Walls{}, nil)
+	require.NoError(t, err)
+	_, err = sv.Solve(ctx, staggered.NewFlow(g), nil, force)
+	require.ErrorIs(t, err, context.Canceled)
+}
+
+func TestWallsHaveNames(t *testing.T) {
+	f := func(float64) float64 { return 0 }
+	for want, w := range map[string]stokes.Wall{
+		"free slip": stokes.FreeSlip, "no slip": stokes.NoSlip, "periodic": stokes.Periodic,
+		"moving": stokes.FreeSlip.Moving(f), "free slip, through-flow": stokes.FreeSlip.Through(f),
+		"moving, through-flow": stokes.NoSlip.Through(f).Moving(f),
+	} {
+		require.Equal(t, want, w.String())
+	}
+}
+
+// Gauss quadrature with four points is exact to the seventh degree.
+func TestThroughFlowIsTheMeanOverEachFace(t *testing.T) {
+	g := uniform(t, 2, 3, 1, 1)
+	f := func(z float64) float64 { return 8 * math.Pow(z, 7) }
+	sv, err := stokes.NewSolver(g, stokes.Walls{Left: stokes.NoSlip.Through(f), Right: stokes.NoSlip.Through(f)}, nil)
+	require.NoError(t, err)
+	flow := staggered.NewFlow(g)
+	_, err = sv.Solve(context.Background(), flow, nil, nil)
+	require.NoError(t, err)
+	for k, z := range []float64{0, 1. / 3, 2. / 3} {
+		want := 3 * (math.Pow(z+1./3, 8) - math.Pow(z, 8))
+		require.InDelta(t, want, flow.VX[3*k], 1e-14)
+		require.InDelta(t, want, flow.VX[3*k+2], 1e-14)
+	}
+}
+
 func TestMethodIsChosen(t *testing.T) {
 	g, prime := uniform(t, 32, 24, 1, 1), uniform(t, 37, 24, 1, 1)
 	eta, force := plume(g, 10)
