@@ -72,7 +72,8 @@ func marginalLaws() []Law {
 		if err != nil {
 			continue // none of the three
 		}
-		laws = append(laws, MarginalLayer(rd, w), HowardCycle(rd, w), WholeLayer(rd, third, w), MarginalTop(rd, w))
+		laws = append(laws, MarginalLayer(rd, w), HowardCycle(rd, w), WholeLayer(rd, third, w), MarginalTop(rd, w),
+			MarginalMixed(rd, w), MarginalMixedTemperature(rd, w))
 	}
 	return laws
 }

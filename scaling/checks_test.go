@@ -197,10 +197,7 @@ func addTyped(calls map[string]func() (float64, error)) {
 		return l.FrankKamenetskii(creep.Energy, 1600)
 	}
 	calls["S076"] = func() (float64, error) { l, err := withLid(); return float64(l.ViscousScale), err }
-	calls["S080"] = func() (float64, error) {
-		// 1.2 (n+1) viscous scales of ΔT/15
-		return scaling.SolomatovMoresiLid.Drop / 15, nil
-	}
+	calls["S080"] = func() (float64, error) { return scaling.RheologicalDrop(15, 1) }
 	calls["S081"] = func() (float64, error) { l, err := withLid(); return float64(l.HeatFlux), err }
 	calls["S082"] = func() (float64, error) { l, err := withLid(); return float64(l.Thickness), err }
 	calls["S083"] = func() (float64, error) { return scaling.DavailleJaupartLid.CriticalRayleigh(), nil }

@@ -211,6 +211,30 @@ func TestMarginalLaws(t *testing.T) {
 	require.InEpsilon(t, 1000, 1e9*math.Pow(ti, 4), 1e-12)
 }
 
+// Both layers are marginal and the heat is balanced.
+func TestMarginalMixed(t *testing.T) {
+	flux, temperature := MarginalMixed(1000, Free), MarginalMixedTemperature(1000, Free)
+	for _, h := range []float64{0, 1, 5, 20, 46} {
+		v := Groups{Rayleigh: 1e8, Heating: h}
+		nu, err := flux.At(v)
+		require.NoError(t, err)
+		ti, err := temperature.At(v)
+		require.NoError(t, err)
+		bottom := nu - h
+		for _, layer := range []struct{ drop, flux float64 }{{ti, nu}, {1 - ti, bottom}} {
+			rd, err := LocalRayleigh(1e8, layer.drop, layer.drop/layer.flux)
+			require.NoError(t, err)
+			require.InEpsilon(t, 1000, rd, 1e-9, "H = %g", h)
+		}
+	}
+	v := Groups{Rayleigh: 1e8}
+	require.InEpsilon(t, MarginalLayer(1000, Free).Evaluate(v), flux.Evaluate(v), 1e-12)
+	require.InEpsilon(t, 0.5, temperature.Evaluate(v), 1e-12)
+	// H = (Ra/Rd)^(1/3) = 46.4: an interior as hot as the bottom; beyond, none.
+	_, err := flux.At(Groups{Rayleigh: 1e8, Heating: 46.5})
+	require.ErrorIs(t, err, ErrNoValue)
+}
+
 func TestWallsCritical(t *testing.T) {
 	for _, w := range []Walls{Free, FreeOverRigid, Rigid} {
 		ra, k, err := w.Critical()

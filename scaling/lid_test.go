@@ -65,6 +65,19 @@ func TestLidIsConsistent(t *testing.T) {
 	require.ErrorIs(t, err, ErrOutOfRange)
 }
 
+func TestRheologicalDrop(t *testing.T) {
+	x, err := RheologicalDrop(15, 1)
+	require.NoError(t, err)
+	require.InEpsilon(t, SolomatovMoresiLid.Drop/15, x, 1e-14)
+	x, err = RheologicalDrop(40, 3)
+	require.NoError(t, err)
+	require.InEpsilon(t, 0.12, x, 1e-14)
+	_, err = RheologicalDrop(0, 1)
+	require.ErrorContains(t, err, "Frank-Kamenetskii parameter")
+	_, err = RheologicalDrop(1, 0)
+	require.ErrorContains(t, err, "stress exponent")
+}
+
 func TestMarginalLid(t *testing.T) {
 	s, err := MarginalLid(2.24, DavailleJaupartLid.CriticalRayleigh())
 	require.NoError(t, err)

@@ -1,6 +1,10 @@
 package scaling
 
-import "math"
+import (
+	"math"
+
+	"example.org/overturn/scaling/internal/check"
+)
 
 // Bounds of the regimes of convection with strongly temperature-dependent
 // viscosity, in θ/(n+1) (Solomatov 1995, from memory).
@@ -29,6 +33,17 @@ func SolomatovMoresi() Law {
 			return (0.31 + 0.22*n) * math.Pow(v.FrankKamenetskii, -2*(1+n)/(2+n)) * math.Pow(v.InteriorRayleigh, n/(n+2))
 		},
 	}
+}
+
+// RheologicalDrop returns the temperature drop of the layer that convects under a
+// stagnant lid, over the whole drop: 1.2 (n+1)/θ for a creep law of exponent n
+// (Solomatov & Moresi 2000, from memory).
+func RheologicalDrop(theta, n float64) (float64, error) {
+	err := check.First(check.Positive(pkg, "Frank-Kamenetskii parameter", theta), check.Within(pkg, "stress exponent", n, 1, maxStressExponent))
+	if err != nil {
+		return 0, err
+	}
+	return 1.2 * (n + 1) / theta, nil
 }
 
 // StagnantLid is the general law of a marginally stable layer under a stagnant

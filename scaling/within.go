@@ -1,6 +1,10 @@
 package scaling
 
-import "math"
+import (
+	"math"
+
+	"example.org/overturn/scaling/internal/root"
+)
 
 // MarginalTop is the temperature of a layer heated from within, all of whose
 // heat passes one marginally stable boundary layer at the top:
@@ -20,6 +24,59 @@ func MarginalTop(rd float64, walls Walls) Law {
 			"Vilella & Deschamps 2018; prefactors not known to us)",
 		Prefactor: math.Pow(rd, 0.25), Powers: []Power{{HeatingRayleighNumber, -0.25}},
 	}
+}
+
+// MarginalMixed is the heat flux through the top of a layer between isothermal
+// walls that is heated from below and from within, both of whose boundary layers
+// are marginally stable: with T the interior temperature in the drop,
+//
+//	Nu_top = (Ra/Rd)^(1/3) T^(4/3),  Nu_bottom = (Ra/Rd)^(1/3) (1-T)^(4/3),  Nu_top = Nu_bottom + H.
+//
+// It is [MarginalLayer] for H = 0. Marginal stability is confirmed for mixed
+// heating once the two layers are allowed to interact (Ferrick & Korenaga 2023,
+// abstract); here they are not. Above H = (Ra/Rd)^(1/3) the interior is hotter
+// than the bottom and there is no value.
+func MarginalMixed(rd float64, walls Walls) Law {
+	l := marginalMixed(rd, walls)
+	l.Name, l.Formula, l.Quantity = "marginally stable layers, mixed heating", "Nu = (Ra/Rd)^(1/3) T^(4/3), T of the balance with H", Nusselt
+	l.Value = func(v Groups) float64 {
+		return math.Cbrt(v.Rayleigh/rd) * math.Pow(mixedInterior(v.Heating/math.Cbrt(v.Rayleigh/rd)), 4./3)
+	}
+	return l
+}
+
+// MarginalMixedTemperature is the interior temperature that goes with
+// [MarginalMixed], in the temperature drop.
+func MarginalMixedTemperature(rd float64, walls Walls) Law {
+	l := marginalMixed(rd, walls)
+	l.Name, l.Formula, l.Quantity = "marginally stable layers, interior temperature", "T^(4/3) - (1-T)^(4/3) = H (Rd/Ra)^(1/3)", MeanTemperature
+	l.Value = func(v Groups) float64 { return mixedInterior(v.Heating / math.Cbrt(v.Rayleigh/rd)) }
+	return l
+}
+
+func marginalMixed(rd float64, walls Walls) Law {
+	return Law{
+		Geometry: HorizontalLayer, Walls: walls, Heating: Mixed, Rheology: Isoviscous, Flow: TimeDependent,
+		// Heating may be zero, so that it is no group that must be given.
+		Basis: RayleighNumber, Needs: []Group{RayleighNumber},
+		Limits: []Limit{{RayleighNumber, 16 * rd, math.Inf(1)}},
+		Source: "Malkus (1954), with a balance of heat", Status: Derived,
+		Note: "the layers do not interact; no value above H = (Ra/Rd)^(1/3)",
+	}
+}
+
+// mixedInterior solves T^(4/3) - (1-T)^(4/3) = h for 1/2 <= T <= 1.
+func mixedInterior(h float64) float64 {
+	if !(h >= 0 && h <= 1) {
+		return math.NaN()
+	}
+	t, err := root.Find(func(t float64) float64 {
+		return math.Pow(t, 4./3) - math.Pow(1-t, 4./3) - h
+	}, 0.5, 1, 0)
+	if err != nil {
+		return math.NaN()
+	}
+	return t
 }
 
 // MixedHeating is the mean temperature of an isoviscous layer between free

@@ -1,7 +1,9 @@
 package history
 
 import (
+	"cmp"
 	"math"
+	"slices"
 
 	"example.org/overturn/scaling/internal/ode"
 	"example.org/overturn/scaling/internal/root"
@@ -127,7 +129,9 @@ func (w *watch) between(events []Event, t0, t1 float64) (stop bool) {
 			end = t
 		}
 	}
-	sortByDistance(found, t0)
+	slices.SortStableFunc(found, func(a, b Occurrence) int {
+		return cmp.Compare(math.Abs(float64(a.Time)-t0), math.Abs(float64(b.Time)-t0))
+	})
 	for _, o := range found {
 		if !(math.Abs(float64(o.Time)-t0) > math.Abs(end-t0)) {
 			w.h.events = append(w.h.events, o)
@@ -158,12 +162,4 @@ func (w *watch) value(e Event, t float64) float64 {
 		return math.NaN()
 	}
 	return e.Value(s)
-}
-
-func sortByDistance(o []Occurrence, t0 float64) {
-	for i := 1; i < len(o); i++ {
-		for j := i; j > 0 && math.Abs(float64(o[j].Time)-t0) < math.Abs(float64(o[j-1].Time)-t0); j-- {
-			o[j], o[j-1] = o[j-1], o[j]
-		}
-	}
 }

@@ -57,6 +57,14 @@ func TestSourcesOfHeat(t *testing.T) {
 	require.InDelta(t, 19.75e12, float64(p)*4.04e24, 0.01e12)
 }
 
+// Rybach (1988) for 4 ppm U, 15 ppm Th and 3.5% K at 2700 kg/m³: by hand,
+// 0.027 (38.08 + 38.4 + 12.18) µW/m³.
+func TestRockHeating(t *testing.T) {
+	a, err := RockHeating(2700, Composition{Uranium: 4e-6, Thorium: 15e-6, Potassium: 0.035})
+	require.NoError(t, err)
+	require.InEpsilon(t, 2.39382e-6, float64(a), 1e-12)
+}
+
 func TestHeatingErrors(t *testing.T) {
 	for want, c := range map[string]Composition{
 		"Composition.Potassium": {Potassium: -1}, "Composition.Thorium": {Thorium: 2}, "Composition.Uranium": {Uranium: math.NaN()},

@@ -284,6 +284,15 @@ func TestEvents(t *testing.T) {
 	require.Len(t, back.Events(), 1)
 	require.Equal(t, "rising", back.Events()[0].Event)
 
+	// Several in one step come in their order in time, whatever that of the list;
+	// nothing after one that stops the run.
+	dense := []Event{CoolsTo(0, 1699.98), CoolsTo(0, 1699.99), CoolsTo(0, 1700), CoolsTo(0, 1699.97)}
+	dense[1].After = Stop
+	ordered := run(t, b, 0, 4.5*gyr, &Settings{Events: dense}).Events()
+	require.Len(t, ordered, 2)
+	require.Equal(t, "cools to 1700 K", ordered[0].Event)
+	require.Equal(t, "cools to 1699.99 K", ordered[1].Event)
+
 	// One that stops the run.
 	at1700.After = Stop
 	stopped := run(t, b, 0, 4.5*gyr, &Settings{Events: []Event{at1700, at1800}})
@@ -389,6 +398,22 @@ func TestRunErrors(t *testing.T) {
 	require.NoError(t, err)
 	_, err = m.Run(0, 4.5*gyr)
 	require.ErrorIs(t, err, ErrRunaway)
+}
+
+// A run that cannot take its first step has no history.
+func TestNoFirstStep(t *testing.T) {
+	b := planet(t, 2000)
+	b.Reservoirs[0].Loss = LossFunc(func(t, _ units.Temperature) units.HeatFlux {
+		if t != 2000 {
+			return units.HeatFlux(math.NaN())
+		}
+		return 1
+	})
+	m, err := New(b, nil)
+	require.NoError(t, err)
+	h, err := m.Run(0, gyr)
+	require.ErrorIs(t, err, ErrRunaway)
+	require.Nil(t, h)
 }
 
 func TestErrorsNameTheField(t *testing.T) {

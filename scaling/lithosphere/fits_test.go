@@ -13,6 +13,7 @@ import (
 // The constants of Stein & Stein (1992) give the coefficients of their own fits:
 // 510 mW/m² √Myr, 365 m/√Myr, 5651 m.
 func TestSteinSteinIsConsistent(t *testing.T) {
+	require.Equal(t, 2600*units.Metre, SteinSteinRidge)
 	p := SteinStein()
 	h := HalfSpace{p.Material, p.Surface, p.Mantle, p.Overburden}
 	q, err := h.HeatFlux(1 * myr)

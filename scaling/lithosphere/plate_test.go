@@ -193,6 +193,32 @@ func TestSpreadingMattersNearTheRidgeOnly(t *testing.T) {
 	require.ErrorContains(t, err, "distance from the ridge")
 }
 
+// bare drops the unit of a result.
+func bare[Q ~float64](q Q, err error) (float64, error) { return float64(q), err }
+
+// A plate so slow that conduction along it delays its cooling for ages.
+func TestAgesOfSlowPlate(t *testing.T) {
+	p := SteinStein()
+	p.Spreading = 0.02 * units.CentimetrePerYear
+	age := 700 * myr
+	q, err := p.HeatFlux(age)
+	require.NoError(t, err)
+	still, err := SteinStein().HeatFlux(age)
+	require.NoError(t, err)
+	require.Less(t, float64(still), float64(q))
+	back, err := p.AgeOfHeatFlux(q)
+	require.NoError(t, err)
+	require.InEpsilon(t, float64(age), float64(back), 1e-6)
+	s, err := p.Subsidence(2000 * myr)
+	require.NoError(t, err)
+	back, err = p.AgeOfSubsidence(s)
+	require.NoError(t, err)
+	require.InEpsilon(t, float64(2000*myr), float64(back), 1e-6)
+	// The youngest point that the series reaches is the hottest flux it has.
+	_, err = p.AgeOfHeatFlux(1e9)
+	require.ErrorContains(t, err, "heat flux")
+}
+
 func TestErrorsNameTheField(t *testing.T) {
 	good := SteinStein()
 	broken := func(change func(*Plate)) Plate {
@@ -217,19 +243,21 @@ func TestErrorsNameTheField(t *testing.T) {
 			models = append(models, h)
 		}
 		for _, m := range models {
-			var err error
-			_, err = m.Temperature(1, 1)
-			require.ErrorContains(t, err, "lithosphere: "+want)
-			_, err = m.HeatFlux(1)
-			require.ErrorContains(t, err, want)
-			_, err = m.Subsidence(1)
-			require.ErrorContains(t, err, want)
-			_, err = m.Thickness(0.5, 1)
-			require.ErrorContains(t, err, want)
-			_, err = m.AgeOfHeatFlux(1)
-			require.ErrorContains(t, err, want)
-			_, err = m.AgeOfSubsidence(1)
-			require.ErrorContains(t, err, want)
+			refuses := func(x float64, err error) {
+				t.Helper()
+				require.ErrorContains(t, err, "lithosphere: "+want)
+				require.Zero(t, x)
+			}
+			refuses(bare(m.Temperature(1, 1)))
+			refuses(bare(m.HeatFlux(1)))
+			refuses(bare(m.Subsidence(1)))
+			refuses(bare(m.Thickness(0.5, 1)))
+			refuses(bare(m.AgeOfHeatFlux(1)))
+			refuses(bare(m.AgeOfSubsidence(1)))
+			if p, ok := m.(Plate); ok {
+				refuses(bare(p.FinalHeatFlux()))
+				refuses(bare(p.FinalSubsidence()))
+			}
 		}
 	}
 	nan := units.Time(math.NaN())
