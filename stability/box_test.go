@@ -13,12 +13,12 @@ import (
 func TestBoxesOfManyWidths(t *testing.T) {
 	s, err := NewSolver(Layer{Bottom: Rigid}, nil)
 	require.NoError(t, err)
-	for _, aspect := range []float64{0.2, 0.5, 1, 1.7, 3, 7.3, 20} {
+	for _, aspect := range []float64{0.2, 0.5, 1, 1.7, 3, 7.3} {
 		for _, sides := range []Sides{Mirrors, Periodic} {
 			box := Box{Aspect: aspect, Sides: sides}
 			var values []float64
 			best, next := 0, 0
-			for n := 1; n <= 40; n++ {
+			for n := 1; n <= 2 || box.wavenumber(n) < 9; n++ { // two, and all near the minimum
 				o, err := s.Neutral(Search{}, float64(n)*math.Pi*float64(1+int(sides))/aspect)
 				require.NoError(t, err)
 				values = append(values, o.Value)

@@ -40,8 +40,8 @@ func ExampleExponential() {
 	if err != nil {
 		log.Fatal(err)
 	}
-	fmt.Printf("Ra = %.4g at k = %.3f, strongest flow at z = %.2f\n", onset.Rayleigh, onset.Wavenumber, onset.Mode.Peak())
-	// Output: Ra = 7.606e+05 at k = 5.275, strongest flow at z = 0.11
+	fmt.Printf("Ra = %.4g at k = %.3f, strongest flow at z = %.1f\n", onset.Rayleigh, onset.Wavenumber, onset.Mode.Peak())
+	// Output: Ra = 7.606e+05 at k = 5.275, strongest flow at z = 0.1
 }
 
 func ExampleSolver_Find() {

@@ -21,27 +21,27 @@ func rung(level int) (refinements, degree int) {
 	return 1 + level/len(fineDegrees), fineDegrees[level%len(fineDegrees)]
 }
 
-// wallShare is the share of an element at a wall that refinement gives to the
-// wall: boundary layers are found in few steps.
-const wallShare = 0.25
+// wallShares are where refinement cuts an element at a wall, from the wall:
+// boundary layers are found in few steps.
+var wallShares = [...]float64{0.04, 0.2}
 
 // refined cuts the first and the last interval near the ends, and halves the
 // others, the given number of times.
 func refined(nodes []float64, times int) []float64 {
 	for range times {
 		last := len(nodes) - 2
-		finer := make([]float64, 0, 2*len(nodes))
+		finer := make([]float64, 0, 2*len(nodes)+4)
 		for i, z := range nodes[:last+1] {
 			h := nodes[i+1] - z
 			finer = append(finer, z)
 			if i == 0 {
-				finer = append(finer, z+wallShare*h)
+				finer = append(finer, z+wallShares[0]*h, z+wallShares[1]*h)
 			}
 			if i > 0 && i < last {
 				finer = append(finer, z+h/2)
 			}
 			if i == last {
-				finer = append(finer, z+(1-wallShare)*h)
+				finer = append(finer, z+(1-wallShares[1])*h, z+(1-wallShares[0])*h)
 			}
 		}
 		nodes = append(finer, nodes[last+1])
@@ -69,7 +69,7 @@ func (l *ladder) size(i int) int {
 	refinements, degree := rung(i)
 	elements := len(l.system.nodes) - 1
 	for range refinements {
-		elements = max(2*elements, elements+2)
+		elements = 2*elements + 2 + max(0, 2-elements)
 	}
 	return elements * degree * len(l.system.fields)
 }

@@ -209,7 +209,7 @@ func TestNothingGrowsBelowTheFirstOnset(t *testing.T) {
 		require.NoError(t, err)
 		o, err := s.Critical()
 		require.NoError(t, err, "%v", l)
-		for k := 0.05; k < 60; k *= 1.07 {
+		for k := 0.3; k < 40; k *= 1.12 {
 			g, err := s.Growth(o.Rayleigh*(1-1e-6), k)
 			require.NoError(t, err)
 			assert.Less(t, g.Rate, 0.0, "%v at k = %g, onset %v", l, k, o)
@@ -235,7 +235,7 @@ func TestTwoMinima(t *testing.T) {
 		s, err := NewSolver(l, nil)
 		require.NoError(t, err)
 		var curve []Onset
-		for k := 0.5; k < 60; k *= 1.05 {
+		for k := 0.7; k < 50; k *= 1.08 {
 			o, err := s.Neutral(Search{}, k)
 			require.NoError(t, err)
 			curve = append(curve, o)
@@ -261,7 +261,7 @@ func TestTwoMinima(t *testing.T) {
 		t.Logf("viscosity %.1e: minima at k = %.3g, Ra = %.4g; found %v", weak, ks, values, o)
 		require.NotEmpty(t, ks)
 		assert.LessOrEqual(t, o.Value, values[best])
-		assert.InEpsilon(t, ks[best], o.Wavenumber, 0.05)
+		assert.InEpsilon(t, ks[best], o.Wavenumber, 0.09)
 		if len(ks) == 2 {
 			winners[best] = true
 		}

@@ -318,15 +318,15 @@ func (s Shell) system(still bool, scale float64, nodes []float64, degree int) *s
 	return sys
 }
 
-func (sys *system) shellFlow(viscosity func(float64) float64, prandtl float64) {
-	w := sys.velocity
+func (s *system) shellFlow(viscosity func(float64) float64, prandtl float64) {
+	w := s.velocity
 	times := func(power float64) int {
-		return sys.coefficient(func(r float64) float64 { return viscosity(r) * math.Pow(r, power) })
+		return s.coefficient(func(r float64) float64 { return viscosity(r) * math.Pow(r, power) })
 	}
 	add := func(power, coefficient int, i, j int, scale float64) {
-		sys.add(integral{pencil.Base, power, w, w, coefficient}, i, j, scale)
+		s.add(integral{pencil.Base, power, w, w, coefficient}, i, j, scale)
 		if i != j {
-			sys.add(integral{pencil.Base, power, w, w, coefficient}, j, i, scale)
+			s.add(integral{pencil.Base, power, w, w, coefficient}, j, i, scale)
 		}
 	}
 	r2, r0, inv1, inv2 := times(2), times(0), times(-1), times(-2)
@@ -355,28 +355,28 @@ func (sys *system) shellFlow(viscosity func(float64) float64, prandtl float64) {
 		return
 	}
 	// (σ/Pr) ∫ (r²XX̃ + L r²UŨ)
-	square := sys.coefficient(func(r float64) float64 { return r * r })
-	first := sys.coefficient(func(r float64) float64 { return r })
+	square := s.coefficient(func(r float64) float64 { return r * r })
+	first := s.coefficient(func(r float64) float64 { return r })
 	mass := integral{pencil.Mass, 0, w, w, square}
-	sys.add(mass, 1, 1, -1/prandtl)
+	s.add(mass, 1, 1, -1/prandtl)
 	mass.coefficient = first
-	sys.add(mass, 1, 0, -1/prandtl)
-	sys.add(mass, 0, 1, -1/prandtl)
+	s.add(mass, 1, 0, -1/prandtl)
+	s.add(mass, 0, 1, -1/prandtl)
 	mass.coefficient = 0
-	sys.add(mass, 0, 0, -1/prandtl)
+	s.add(mass, 0, 0, -1/prandtl)
 	mass.power = 2
-	sys.add(mass, 0, 0, -1/prandtl)
+	s.add(mass, 0, 0, -1/prandtl)
 }
 
 // shellHeat adds ∫ r²θ'φ' + Lθφ + σr²θφ and the fluxes r²Bi θφ at the ends.
-func (sys *system) shellHeat(biot [2]float64, inner, outer float64) {
-	t := sys.temperature
-	square := sys.coefficient(func(r float64) float64 { return r * r })
-	sys.add(integral{pencil.Base, 0, t, t, square}, 1, 1, 1)
-	sys.add(integral{pencil.Base, 2, t, t, 0}, 0, 0, 1)
-	sys.add(integral{pencil.Mass, 0, t, t, square}, 0, 0, -1)
+func (s *system) shellHeat(biot [2]float64, inner, outer float64) {
+	t := s.temperature
+	square := s.coefficient(func(r float64) float64 { return r * r })
+	s.add(integral{pencil.Base, 0, t, t, square}, 1, 1, 1)
+	s.add(integral{pencil.Base, 2, t, t, 0}, 0, 0, 1)
+	s.add(integral{pencil.Mass, 0, t, t, square}, 0, 0, -1)
 	for end, r := range []float64{inner, outer} {
-		sys.addEnd(integral{pencil.Base, 0, t, t, 0}, end, 0, 0, biot[end]*r*r)
+		s.addEnd(integral{pencil.Base, 0, t, t, 0}, end, 0, 0, biot[end]*r*r)
 	}
 }
 

@@ -347,11 +347,11 @@ func (s *system) addInduction(walls [2]MagneticWall, root, q float64) {
 
 func (b *baseState) unit() bool { return b.uniform && b.gradient(0.5) == 1 }
 
-func (v *viscosityState) degree() int {
-	if v.resolved == nil {
+func (s *viscosityState) degree() int {
+	if s.resolved == nil {
 		return 0
 	}
-	return v.resolved.Degree()
+	return s.resolved.Degree()
 }
 
 // sameNode is the distance below which two nodes of a mesh are one.
