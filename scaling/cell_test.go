@@ -8,6 +8,7 @@ import (
 	"github.com/stretchr/testify/require"
 
 	"example.org/overturn/boussinesq"
+	"example.org/overturn/scaling/internal/rolls"
 	"example.org/overturn/units"
 )
 
@@ -283,6 +284,13 @@ func TestCoolingPieces(t *testing.T) {
 	require.ErrorContains(t, err, "diffusivity")
 	_, err = GradientThickness(1, -1)
 	require.ErrorContains(t, err, "time")
+}
+
+// The widths that the documentation states are those that the solvers take.
+func TestCellWidths(t *testing.T) {
+	require.Equal(t, rolls.MinWidth, MinCellWidth)
+	require.EqualValues(t, rolls.MaxFreeWidth, MaxCellWidth)
+	require.Equal(t, rolls.MaxRigidWidth, MaxRigidCellWidth)
 }
 
 func TestMemoryIsSafeAndForgets(t *testing.T) {

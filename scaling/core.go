@@ -32,9 +32,9 @@ func (c Core) String() string { return name(int(c), "sine core", "viscous core",
 
 // Range of cell widths that the cores are made for.
 const (
-	MinCellWidth      = rolls.MinWidth
-	MaxCellWidth      = rolls.MaxFreeWidth
-	MaxRigidCellWidth = rolls.MaxRigidWidth // wider cells have counter-rotating eddies at rigid walls
+	MinCellWidth      = 0.1
+	MaxCellWidth      = 10
+	MaxRigidCellWidth = 2.5 // wider cells have counter-rotating eddies at rigid walls
 )
 
 // circulation is a core flow of unit amplitude in a cell of width a and depth

@@ -14,13 +14,13 @@
 //
 // Beside the laws:
 //
-//	[Cell]          one convection roll: heat flux, speeds, thickness, stress
-//	[LidLaw]        lid, interior and flux of a layer under a stagnant lid
-//	[RegimeOf]      small contrast, transitional, stagnant lid
-//	[Criterion]     when a cooling layer starts to convect, and how wide the drips are
-//	[Body]          Stokes velocities of spheres, drops, cylinders and sheets
-//	[ConduitOf]     fluxes of plume conduits; [StartingPlume], their heads
-//	[FitPowerLaw]   exponents with confidence intervals, from runs
+//	Cell         one convection roll: heat flux, speeds, thickness, stress
+//	LidLaw       lid, interior and flux of a layer under a stagnant lid
+//	RegimeOf     small contrast, transitional, stagnant lid
+//	Criterion    when a cooling layer starts to convect, and how wide the drips are
+//	Body         Stokes velocities of spheres, drops, cylinders and sheets
+//	ConduitOf    fluxes of plume conduits; StartingPlume, their heads
+//	FitPowerLaw  exponents with confidence intervals, from runs
 //
 // Sub-packages: lithosphere cools with age, history integrates thermal
 // histories, uncertainty carries distributions through any of this.
