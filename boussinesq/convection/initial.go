@@ -107,11 +107,30 @@ func (sys *system) start(ctx context.Context) (*staggered.Scalar, error) {
 	return t, nil
 }
 
-func checkTemperature(t *staggered.Scalar) error {
+// checkGiven checks a temperature that a caller made: on any grid of the same
+// box, and whole.
+func (sys *system) checkGiven(name string, t *staggered.Scalar) error {
+	if t == nil || t.Grid == nil {
+		return fmt.Errorf("convection: %s has no grid", name)
+	}
+	if n := t.Grid.NX() * t.Grid.NZ(); len(t.Values) != n {
+		return fmt.Errorf("convection: %s holds %d values, want %d for %v", name, len(t.Values), n, t.Grid)
+	}
+	g := sys.Grid
+	if !sameExtent(t.Grid.Width(), g.Width()) || !sameExtent(t.Grid.Height(), g.Height()) {
+		return fmt.Errorf("convection: %s lives on a box of %vx%v, want %vx%v",
+			name, t.Grid.Width(), t.Grid.Height(), g.Width(), g.Height())
+	}
+	return checkFinite(name, t)
+}
+
+func checkTemperature(t *staggered.Scalar) error { return checkFinite("temperature", t) }
+
+func checkFinite(name string, t *staggered.Scalar) error {
 	nx := t.Grid.NX()
 	for c, v := range t.Values {
 		if math.IsNaN(v) || math.IsInf(v, 0) {
-			return fmt.Errorf("convection: temperature of cell (%d, %d) is %v, want a finite number", c%nx, c/nx, v)
+			return fmt.Errorf("convection: %s of cell (%d, %d) is %v, want a finite number", name, c%nx, c/nx, v)
 		}
 	}
 	return nil

@@ -115,3 +115,24 @@ func TestPeriodicSidesKnowNoOrigin(t *testing.T) {
 		}
 	}
 }
+
+func TestFieldsThatDoNotFitAreErrors(t *testing.T) {
+	g := square(t, 8)
+	wide, err := staggered.Uniform(8, 8, 2, 1)
+	require.NoError(t, err)
+	m, err := New(Problem{Grid: g}, nil)
+	require.NoError(t, err)
+	for want, field := range map[string]*staggered.Scalar{
+		"has no grid":                    {},
+		"holds 5 values, want 64":        {Grid: g, Values: make([]float64, 5)},
+		"a box of 2x1, want 1x1":         staggered.NewScalar(wide),
+		"cell (1, 0) is NaN, want a fin": {Grid: g, Values: append([]float64{0, math.NaN()}, make([]float64, 62)...)},
+	} {
+		assert.ErrorContains(t, m.SetTemperature(field), "convection: temperature")
+		assert.ErrorContains(t, m.SetTemperature(field), want)
+		_, err = Steady(context.Background(), Problem{Grid: g}, &SteadySettings{Guess: field})
+		assert.ErrorContains(t, err, "convection: SteadySettings.Guess")
+		assert.ErrorContains(t, err, want)
+	}
+	assert.ErrorContains(t, m.SetTemperature(nil), "has no grid")
+}

@@ -61,14 +61,16 @@ func FromLayerSI(l boussinesq.Layer, g *staggered.Grid) (Problem, error) {
 	}, nil
 }
 
-// heightTolerance is how far, relatively, a grid's height may be off.
-const heightTolerance = 1e-9
+// extentTolerance is how far, relatively, the extent of a grid may be off.
+const extentTolerance = 1e-9
+
+func sameExtent(got, want float64) bool { return math.Abs(got-want) <= extentTolerance*want }
 
 func checkHeight(g *staggered.Grid, want float64) error {
 	if g == nil {
 		return fmt.Errorf("convection: grid is nil, want one of height %v", want)
 	}
-	if math.Abs(g.Height()-want) > heightTolerance*want {
+	if !sameExtent(g.Height(), want) {
 		return fmt.Errorf("convection: grid has height %v, want %v", g.Height(), want)
 	}
 	return nil

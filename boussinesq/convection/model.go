@@ -2,7 +2,6 @@ package convection
 
 import (
 	"context"
-	"fmt"
 	"math"
 
 	"example.org/overturn/stokes/staggered"
@@ -95,12 +94,7 @@ func (m *Model) Viscosity() *staggered.Scalar {
 // same box, from which it interpolates. The time stays; the next step starts
 // afresh, without use of earlier flows.
 func (m *Model) SetTemperature(t *staggered.Scalar) error {
-	g := m.sys.Grid
-	if t.Grid.Width() != g.Width() || t.Grid.Height() != g.Height() {
-		return fmt.Errorf("convection: temperature on a box of %vx%v, want %vx%v",
-			t.Grid.Width(), t.Grid.Height(), g.Width(), g.Height())
-	}
-	if err := checkTemperature(t); err != nil {
+	if err := m.sys.checkGiven("temperature", t); err != nil {
 		return err
 	}
 	transfer(m.temperature, t)

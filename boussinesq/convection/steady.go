@@ -43,9 +43,10 @@ type SteadySettings struct {
 	// which takes 8 bytes a cell. Default 150.
 	MaxDirections int
 
-	// Guess is a temperature near the steady state. Not nil, it replaces the
-	// approach in time and the coarser grids: Newton's method starts from it on
-	// the grid of the problem.
+	// Guess is a temperature near the steady state, on any grid of the same box.
+	// Not nil, it replaces the approach in time and the coarser grids: Newton's
+	// method starts from it on the grid of the problem, in Refine on the
+	// coarsest of the study.
 	Guess *staggered.Scalar
 
 	// Monitor, if not nil, is called after every Newton step.
@@ -207,10 +208,9 @@ func steadyOn(ctx context.Context, p Problem, s SteadySettings, guess *staggered
 	var t *staggered.Scalar
 	if guess == nil {
 		t, err = sys.start(ctx)
-	} else {
+	} else if err = sys.checkGiven("SteadySettings.Guess", guess); err == nil {
 		t = staggered.NewScalar(p.Grid)
 		transfer(t, guess)
-		err = checkTemperature(t)
 	}
 	if err != nil {
 		return nil, err
