@@ -25,18 +25,19 @@ type checkpointHead struct {
 	NX, NZ              uint64
 	Steps               int64
 	Time, Last, Limit   float64
-	Change, Budget      float64
 	Iterations          int64
 	Solved, HasPrevious uint8
+	Balance             uint32 // see Model.balance
 }
-
-// maxCheckpointCells bounds what Resume believes before it allocates.
-const maxCheckpointCells = 1 << 28
 
 // Save writes the state of the run: a model that [Resume] makes from it
 // continues bit for bit. The problem and the settings are not written, as a
 // viscosity law is code.
 func (m *Model) Save(w io.Writer) error {
+	balance, err := m.balance()
+	if err != nil {
+		return err
+	}
 	var b bytes.Buffer
 	b.Write(checkpointMagic)
 	flag := func(v bool) uint8 {
@@ -48,8 +49,9 @@ func (m *Model) Save(w io.Writer) error {
 	nx, nz := m.sys.Grid.Cells()
 	head := checkpointHead{
 		NX: uint64(nx), NZ: uint64(nz), Steps: int64(m.steps),
-		Time: m.time, Last: m.last, Limit: m.limit, Change: m.change, Budget: m.budget,
+		Time: m.time, Last: m.last, Limit: m.limit,
 		Iterations: int64(m.iterations), Solved: flag(m.solved), HasPrevious: flag(m.hasPrevious),
+		Balance: balance,
 	}
 	// Writing to a bytes.Buffer cannot fail.
 	_ = binary.Write(&b, binary.LittleEndian, head)
@@ -61,6 +63,28 @@ func (m *Model) Save(w io.Writer) error {
 		return fmt.Errorf("convection: checkpoint: %w", err)
 	}
 	return nil
+}
+
+// balance returns a checksum of the stresses and the buoyancy that the model
+// holds for balanced, 0 where its flow is not solved for. It is another one
+// under another Rayleigh number, viscosity or wall.
+func (m *Model) balance() (uint32, error) {
+	if !m.solved {
+		return 0, nil
+	}
+	if m.sys.viscosity != nil {
+		m.sys.viscosityTo(m.sys.viscosity, m.temperature)
+	}
+	stresses := staggered.NewVector(m.sys.Grid)
+	if err := m.sys.stokes.ApplyTo(stresses, m.flow, m.sys.viscosity); err != nil {
+		return 0, fmt.Errorf("convection: checkpoint: %w", err)
+	}
+	m.sys.buoyancy.FillVertical(m.temperature, m.sys.Rayleigh)
+	sum := crc32.NewIEEE()
+	for _, a := range [][]float64{stresses.X, stresses.Z, m.sys.buoyancy.Z} {
+		_ = binary.Write(sum, binary.LittleEndian, a) // cannot fail
+	}
+	return sum.Sum32(), nil
 }
 
 // checkpointArrays lists the arrays of a checkpoint in order; the first two are
@@ -75,8 +99,9 @@ func (m *Model) checkpointArrays() [][]float64 {
 
 // Resume returns a model in the state that [Model.Save] wrote. The problem must
 // have the same grid; with the same problem and settings too, the run continues
-// as if it had never stopped. Damaged data is an error that wraps
-// [ErrCheckpoint].
+// as if it had never stopped. Where another Rayleigh number, viscosity or wall
+// makes the saved flow wrong, temperature and time are kept and the flow is
+// found anew. Damaged data is an error that wraps [ErrCheckpoint].
 func Resume(r io.Reader, p Problem, s *Settings) (*Model, error) {
 	m, err := newModel(p, s)
 	if err != nil {
@@ -105,15 +130,21 @@ func Resume(r io.Reader, p Problem, s *Settings) (*Model, error) {
 	}
 	m.steps, m.iterations = int(head.Steps), int(head.Iterations)
 	m.time, m.last, m.limit = head.Time, head.Last, head.Limit
-	m.change, m.budget = head.Change, head.Budget
 	m.solved, m.hasPrevious = head.Solved != 0, head.HasPrevious != 0
+	balance, err := m.balance()
+	if err != nil {
+		return nil, err
+	}
+	if balance != head.Balance {
+		m.restart()
+	}
 	return m, nil
 }
 
 // readArrays fills the model's arrays once it is clear that they fit.
 func (m *Model) readArrays(in io.Reader, head checkpointHead) error {
 	g := m.sys.Grid
-	if head.NX > maxCheckpointCells || head.NZ > maxCheckpointCells || int(head.NX) != g.NX() || int(head.NZ) != g.NZ() {
+	if head.NX != uint64(g.NX()) || head.NZ != uint64(g.NZ()) {
 		return fmt.Errorf("convection: %w: it holds %dx%d cells, want %dx%d", ErrCheckpoint, head.NX, head.NZ, g.NX(), g.NZ())
 	}
 	x, z := make([]float64, g.NX()+1), make([]float64, g.NZ()+1)
