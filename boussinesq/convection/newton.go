@@ -209,11 +209,10 @@ func (n *newton) residual(rate *staggered.Scalar) float64 {
 
 // extent is the range of the temperature, 1 where it is uniform.
 func (n *newton) extent() float64 {
-	lowest, highest := n.temperature.Extrema()
-	if highest.Value == lowest.Value {
-		return 1
+	if e := extent(n.temperature); e > 0 {
+		return e
 	}
-	return highest.Value - lowest.Value
+	return 1
 }
 
 // improve takes one Newton step, shortened where the residual would not fall,

@@ -13,7 +13,7 @@ import (
 type Diagnostics struct {
 	// NuTop and NuBottom are the mean heat flux conducted upward through the
 	// wall over that of a layer at rest between the mean temperatures of bottom
-	// and top. Infinite or NaN where these two are equal.
+	// and top. Infinite or NaN where these two are equal, to rounding.
 	NuTop, NuBottom float64
 
 	// RMSVelocity is the root mean square speed over the box, SurfaceVelocity

@@ -75,6 +75,10 @@ func (s *sampler) diagnose(t *staggered.Scalar, flow *staggered.Flow) (Diagnosti
 	return d, nil
 }
 
+// dropRounding is the share of the temperature below which a difference between
+// bottom and top is rounding: they are equal.
+const dropRounding = 1e-12
+
 // heatFlow sets the Nusselt numbers.
 func (s *sampler) heatFlow(d *Diagnostics, t *staggered.Scalar) error {
 	nz := s.sys.Grid.NZ()
@@ -86,9 +90,19 @@ func (s *sampler) heatFlow(d *Diagnostics, t *staggered.Scalar) error {
 	if err != nil {
 		return err
 	}
-	conducted := s.sys.Conductivity * (warm - cold) / s.sys.Grid.Height()
+	drop := warm - cold
+	if math.Abs(drop) <= dropRounding*max(math.Abs(warm), math.Abs(cold), extent(t)) {
+		drop = 0
+	}
+	conducted := s.sys.Conductivity * drop / s.sys.Grid.Height()
 	d.NuBottom, d.NuTop = into/conducted, -out/conducted
 	return nil
+}
+
+// extent returns the range of a temperature.
+func extent(t *staggered.Scalar) float64 {
+	lowest, highest := t.Extrema()
+	return highest.Value - lowest.Value
 }
 
 // wall returns the mean flux conducted into the box through Bottom or Top and

@@ -185,7 +185,8 @@ func (m *Model) keepFlow() {
 // nextStep chooses the length of the next step.
 func (m *Model) nextStep() float64 {
 	dt := m.settings.Courant * m.sys.heat.StableStep(m.flow)
-	dt = min(dt, m.settings.MaxStep, m.limit)
+	// An implicit step at rest has no bound but the diffusion time of the layer.
+	dt = min(dt, m.settings.MaxStep, m.limit, 1/m.sys.rate())
 	if !m.hasPrevious {
 		// Nothing is known yet of how fast the flow changes. A step within
 		// the explicit limit of conduction is shorter than any growth.
@@ -231,15 +232,14 @@ func (m *Model) limitFrom(dt float64) float64 {
 }
 
 // changeRate returns the root mean square of ∂T/∂t over the last step, in
-// temperature ranges per diffusion time.
+// temperature ranges per diffusion time: infinite where all warms evenly.
 func (m *Model) changeRate(dt float64) float64 {
-	lowest, highest := m.temperature.Extrema()
-	extent := highest.Value - lowest.Value
-	if extent == 0 {
-		return 0
-	}
 	for j, v := range m.temperature.Values {
 		m.old.Values[j] = v - m.old.Values[j]
 	}
-	return m.old.RMS() / (extent * dt * m.sys.rate())
+	change := m.old.RMS()
+	if change == 0 {
+		return 0
+	}
+	return change / (extent(m.temperature) * dt * m.sys.rate())
 }

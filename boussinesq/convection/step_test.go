@@ -353,3 +353,27 @@ func TestDefaultsAreTheWrittenOnes(t *testing.T) {
 	})
 	assert.Equal(t, a.Temperature().Values, b.Temperature().Values)
 }
+
+// Nothing but its own settings bounds an implicit step in a fluid at rest.
+func TestImplicitStepsAtRestStayFinite(t *testing.T) {
+	settings := &Settings{MaxSteps: 200, Heat: &heat.Settings{Scheme: heat.Implicit}}
+	m := run(t, Problem{Grid: square(t, 8)}, settings)
+	assert.Equal(t, 200, m.Step())
+	assert.LessOrEqual(t, m.last, 1.0, "no step is longer than the diffusion time")
+	s, err := m.sample(Running)
+	require.NoError(t, err)
+	assert.InDelta(t, 1, s.NuTop, 1e-9)
+}
+
+// A box without a way out for its heat warms evenly: that is no steady state.
+func TestUniformWarmingIsNotSteady(t *testing.T) {
+	m, err := New(Problem{
+		Grid: square(t, 4), Heating: 1, Thermal: &heat.Walls{}, Initial: func(_, _ float64) float64 { return 0 },
+	}, &Settings{SteadyTolerance: 1e-3, MaxSteps: 5})
+	require.NoError(t, err)
+	s, err := m.Run(context.Background())
+	require.NoError(t, err)
+	assert.Equal(t, AtMaxSteps, s.Stop)
+	assert.Greater(t, s.Change, 1e3)
+	assert.InEpsilon(t, m.Time(), s.MeanTemperature, 1e-12)
+}
