@@ -16,7 +16,8 @@ type Study struct {
 	Solutions []*Solution
 
 	// Estimates of the diagnostics, under the names and in the order of
-	// [Diagnostics.All].
+	// [Diagnostics.All]. That of a diagnostic which is not finite, as NuTop
+	// between walls of one temperature, is NaN.
 	Estimates []NamedEstimate
 
 	// Deviation is the largest distance of an observed order from 2 among the
@@ -100,6 +101,12 @@ func (s *Study) estimate() error {
 		}
 	}
 	for _, name := range names {
+		if v := values[name]; !finite(v) {
+			nan := math.NaN()
+			e := Estimate{Value: nan, Uncertainty: nan, Order: nan, Finest: v[len(v)-1]}
+			s.Estimates = append(s.Estimates, NamedEstimate{Name: name, Estimate: e})
+			continue
+		}
 		e, err := Extrapolate(sizes, values[name])
 		if err != nil {
 			return fmt.Errorf("%s: %w", name, err)
@@ -121,8 +128,13 @@ func (s *Study) distrust(values map[string][]float64) {
 	for _, e := range s.Estimates {
 		v := values[e.Name]
 		n := len(v)
+		size := math.Abs(v[n-1])
+		if e.Name == "MeanTemperature" {
+			// Its zero is arbitrary.
+			size = extent(s.Solutions[n-1].Temperature)
+		}
 		switch {
-		case math.Abs(v[n-1]-v[n-2]) <= unchanging*math.Abs(v[n-1]):
+		case !finite(v), math.Abs(v[n-1]-v[n-2]) <= unchanging*size:
 		case math.IsNaN(e.Order):
 			s.Deviation = 1
 		default:
@@ -133,6 +145,15 @@ func (s *Study) distrust(values map[string][]float64) {
 		e := &s.Estimates[i]
 		e.Uncertainty = max(e.Uncertainty, safety*s.Deviation*s.Deviation*math.Abs(e.Value-e.Finest))
 	}
+}
+
+func finite(values []float64) bool {
+	for _, v := range values {
+		if math.IsNaN(v) || math.IsInf(v, 0) {
+			return false
+		}
+	}
+	return true
 }
 
 // cellSize returns the root of the mean area of a cell.

@@ -1,0 +1,58 @@
+package convection
+
+import (
+	"context"
+	"math"
+	"testing"
+
+	"github.com/stretchr/testify/assert"
+	"github.com/stretchr/testify/require"
+
+	"example.org/overturn/heat"
+	"example.org/overturn/stokes/staggered"
+)
+
+// Between walls of one temperature there is no Nusselt number, not even one
+// made of rounding, and everything else is estimated all the same.
+func TestHeatedLayerBetweenEqualWalls(t *testing.T) {
+	for _, wall := range []float64{0, 3, 271.3} {
+		p := Problem{
+			Grid: square(t, 24), Rayleigh: 1e5, Heating: 1,
+			Thermal: &heat.Walls{Bottom: heat.Isothermal(wall), Top: heat.Isothermal(wall)},
+		}
+		study, err := Refine(context.Background(), p, 2, nil)
+		require.NoError(t, err)
+		for _, sol := range study.Solutions {
+			assert.True(t, math.IsInf(sol.NuTop, 1), "%v", sol.NuTop)
+			assert.True(t, math.IsInf(sol.NuBottom, -1), "%v", sol.NuBottom)
+		}
+		nu, ok := study.Get("NuTop")
+		assert.True(t, ok)
+		assert.True(t, math.IsNaN(nu.Value) && math.IsNaN(nu.Uncertainty) && math.IsNaN(nu.Order))
+		assert.True(t, math.IsInf(nu.Finest, 1))
+		v, ok := study.Get("RMSVelocity")
+		assert.True(t, ok)
+		assert.Greater(t, v.Value, 10*v.Uncertainty)
+	}
+}
+
+// The zero of temperature is nobody's business, not even of the error bars.
+func TestUncertaintyKnowsNoZeroOfTemperature(t *testing.T) {
+	g, err := staggered.Graded(32, 32, 1, 1, staggered.Grading{Left: 4, Right: 4, Bottom: 4, Top: 4})
+	require.NoError(t, err)
+	at := func(offset float64) *Study {
+		study, err := Refine(context.Background(), Problem{
+			Grid: g, Rayleigh: 1e4,
+			Thermal: &heat.Walls{Bottom: heat.Isothermal(1 + offset), Top: heat.Isothermal(offset)},
+		}, 3, nil)
+		require.NoError(t, err)
+		return study
+	}
+	a, b := at(0), at(-0.5)
+	assert.InEpsilon(t, a.Deviation, b.Deviation, 1e-3)
+	for _, name := range []string{"NuTop", "RMSVelocity", "Dissipation"} {
+		x, _ := a.Get(name)
+		y, _ := b.Get(name)
+		assert.InEpsilon(t, x.Uncertainty, y.Uncertainty, 1e-2, name)
+	}
+}
