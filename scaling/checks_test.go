@@ -200,7 +200,7 @@ func addTyped(calls map[string]func() (float64, error)) {
 	calls["S080"] = func() (float64, error) { return scaling.RheologicalDrop(15, 1) }
 	calls["S081"] = func() (float64, error) { l, err := withLid(); return float64(l.HeatFlux), err }
 	calls["S082"] = func() (float64, error) { l, err := withLid(); return float64(l.Thickness), err }
-	calls["S083"] = func() (float64, error) { return scaling.DavailleJaupartLid.CriticalRayleigh(), nil }
+	calls["S083"] = scaling.DavailleJaupartLid.CriticalRayleigh
 	calls["S089"] = func() (float64, error) {
 		o, err := scaling.Criterion{Rayleigh: 1000, Wavenumber: scaling.WavenumberFreeOverRigid}.Onset(rock(), 200)
 		return float64(o.Time), err

@@ -98,13 +98,17 @@ func MarginalLid(drop, rd float64) (LidLaw, error) {
 	if err != nil {
 		return LidLaw{}, err
 	}
-	return LidLaw{Prefactor: math.Pow(drop, 4./3) / math.Cbrt(rd), Drop: drop}, nil
+	s := LidLaw{Prefactor: math.Pow(drop, 4./3) / math.Cbrt(rd), Drop: drop}
+	return s, s.Check()
 }
 
 // CriticalRayleigh returns the local critical Rayleigh number that the two
 // constants imply, Drop⁴/Prefactor³: 242.5 for [DavailleJaupartLid].
-func (s LidLaw) CriticalRayleigh() float64 {
-	return math.Pow(s.Drop, 4) / math.Pow(s.Prefactor, 3)
+func (s LidLaw) CriticalRayleigh() (float64, error) {
+	if err := s.Check(); err != nil {
+		return 0, err
+	}
+	return check.Result(pkg, "critical Rayleigh number", math.Pow(s.Drop, 4)/math.Pow(s.Prefactor, 3))
 }
 
 // Check returns an error that names the first field without sense.

@@ -52,7 +52,9 @@ func TestLidIsConsistent(t *testing.T) {
 
 		// The boundary layer is marginal, with the law's own critical number.
 		local := buoyancy(l) * float64(lid.RheologicalDrop) * math.Pow(float64(lid.LayerThickness), 3) / float64(creep.At(1600))
-		require.InEpsilon(t, s.CriticalRayleigh(), local, 1e-10)
+		critical, err := s.CriticalRayleigh()
+		require.NoError(t, err)
+		require.InEpsilon(t, critical, local, 1e-10)
 	}
 	// 0.53 and 0.47 differ by 13%.
 	a, err := SolomatovMoresi().At(Groups{InteriorRayleigh: 1e8, FrankKamenetskii: 10})
@@ -79,9 +81,15 @@ func TestRheologicalDrop(t *testing.T) {
 }
 
 func TestMarginalLid(t *testing.T) {
-	s, err := MarginalLid(2.24, DavailleJaupartLid.CriticalRayleigh())
+	critical, err := DavailleJaupartLid.CriticalRayleigh()
+	require.NoError(t, err)
+	s, err := MarginalLid(2.24, critical)
 	require.NoError(t, err)
 	require.InEpsilon(t, DavailleJaupartLid.Prefactor, s.Prefactor, 1e-12)
+	_, err = LidLaw{Drop: 1}.CriticalRayleigh()
+	require.ErrorContains(t, err, "LidLaw.Prefactor")
+	_, err = MarginalLid(1e300, 1)
+	require.ErrorContains(t, err, "LidLaw.Prefactor")
 	_, err = MarginalLid(0, 1)
 	require.ErrorContains(t, err, "drop")
 	_, err = MarginalLid(1, math.NaN())

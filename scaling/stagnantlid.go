@@ -43,7 +43,7 @@ func RheologicalDrop(theta, n float64) (float64, error) {
 	if err != nil {
 		return 0, err
 	}
-	return 1.2 * (n + 1) / theta, nil
+	return check.Result(pkg, "rheological drop", 1.2*(n+1)/theta)
 }
 
 // StagnantLid is the general law of a marginally stable layer under a stagnant

@@ -111,7 +111,7 @@ func RockHeating(density units.Density, c Composition) (units.VolumetricHeating,
 		return 0, err
 	}
 	a := 1e-5 * float64(density) * (9.52*c.Uranium*1e6 + 2.56*c.Thorium*1e6 + 3.48*c.Potassium*100)
-	return units.VolumetricHeating(a * 1e-6), nil
+	return check.Result(pkg, "heating", units.VolumetricHeating(a*1e-6))
 }
 
 // Radiogenic is the heating of a mixture of isotopes that decay. Make one with

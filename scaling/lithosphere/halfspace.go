@@ -57,7 +57,7 @@ func (h HalfSpace) Thickness(fraction float64, age units.Time) (units.Length, er
 	if err := check.First(h.Check(), check.NotNegative(pkg, "age", age), checkFraction(fraction)); err != nil {
 		return 0, err
 	}
-	return units.Length(2 * math.Erfinv(fraction) * h.diffusion(age)), nil
+	return check.Result(pkg, "thickness", units.Length(2*math.Erfinv(fraction)*h.diffusion(age)))
 }
 
 // Subsidence returns 2ρα (T_m-T_s)/(ρ-ρ_w) √(κt/π).
@@ -65,7 +65,7 @@ func (h HalfSpace) Subsidence(age units.Time) (units.Length, error) {
 	if err := check.First(h.Check(), check.NotNegative(pkg, "age", age)); err != nil {
 		return 0, err
 	}
-	return units.Length(h.contraction() * 2 / math.Sqrt(math.Pi) * h.diffusion(age)), nil
+	return check.Result(pkg, "subsidence", units.Length(h.contraction()*2/math.Sqrt(math.Pi)*h.diffusion(age)))
 }
 
 // contraction returns ρα (T_m-T_s)/(ρ-ρ_w).

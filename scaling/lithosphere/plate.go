@@ -110,7 +110,7 @@ func (p Plate) Subsidence(age units.Time) (units.Length, error) {
 	if err := s.check(); err != nil {
 		return 0, err
 	}
-	return units.Length(p.contraction() * s.contraction()), nil
+	return check.Result(pkg, "subsidence", units.Length(p.contraction()*s.contraction()))
 }
 
 // FinalSubsidence returns the subsidence of a plate that has stopped cooling.
@@ -118,7 +118,7 @@ func (p Plate) FinalSubsidence() (units.Length, error) {
 	if err := p.Check(); err != nil {
 		return 0, err
 	}
-	return units.Length(p.contraction() / 2), nil
+	return check.Result(pkg, "subsidence", units.Length(p.contraction()/2))
 }
 
 // FinalHeatFlux returns k (T_m-T_s)/a, the heat flux of a plate that has stopped
@@ -127,7 +127,7 @@ func (p Plate) FinalHeatFlux() (units.HeatFlux, error) {
 	if err := p.Check(); err != nil {
 		return 0, err
 	}
-	return units.HeatFlux(float64(p.Material.Conductivity) * p.drop() / float64(p.BaseDepth)), nil
+	return check.Result(pkg, "heat flux", units.HeatFlux(float64(p.Material.Conductivity)*p.drop()/float64(p.BaseDepth)))
 }
 
 // contraction returns ρα (T_m-T_s) a/(ρ-ρ_w).

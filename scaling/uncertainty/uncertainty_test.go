@@ -86,6 +86,60 @@ func TestFirstOrderOfLinearFunction(t *testing.T) {
 	}
 }
 
+// Adding a constant changes no sensitivity, scaling changes none either, and one
+// output does not see another.
+func TestSensitivitiesIgnoreOffsetAndScale(t *testing.T) {
+	f := func(in, out []float64) error {
+		out[0] = in[0] + 0.5*in[1]
+		out[1] = 1e3 + 4*out[0]
+		out[2] = -in[1]
+		return nil
+	}
+	names := []string{"plain", "moved", "other"}
+	settings := &Settings{Samples: 2000, Seed: 4}
+	e, err := Run(ctx, uniform(2, 0, 1), names, f, settings)
+	require.NoError(t, err)
+	plain, err := e.FirstOrder("plain")
+	require.NoError(t, err)
+	moved, err := e.FirstOrder("moved")
+	require.NoError(t, err)
+	sobol, err := Sobol(ctx, uniform(2, 0, 1), names, f, settings)
+	require.NoError(t, err)
+	for j, want := range []float64{0.8, 0.2} {
+		require.InDelta(t, plain[j].First, moved[j].First, 1e-9)
+		require.InDelta(t, plain[j].FirstError, moved[j].FirstError, 1e-9)
+		require.InDelta(t, want, plain[j].First, 0.03)
+		require.InDelta(t, sobol["plain"][j].First, sobol["moved"][j].First, 1e-9)
+		require.InDelta(t, sobol["plain"][j].Total, sobol["moved"][j].Total, 1e-9)
+		require.InDelta(t, want, sobol["plain"][j].First, 0.05)
+		require.InDelta(t, want, sobol["plain"][j].Total, 0.05)
+		require.InDelta(t, float64(j), sobol["other"][j].Total, 0.05)
+	}
+	// A condition sees the inputs and outputs of one and the same sample.
+	p, err := e.Probability(func(in, out []float64) bool {
+		return out[0] == in[0]+0.5*in[1] && out[2] == -in[1] && in[1] > 0.25
+	})
+	require.NoError(t, err)
+	require.InDelta(t, 0.75, p.Value, 1e-12)
+	x, err := e.Input("x2")
+	require.NoError(t, err)
+	y, err := e.Output("other")
+	require.NoError(t, err)
+	for i := range x {
+		require.Equal(t, x[i], -y[i])
+	}
+}
+
+// An output that is constant but for a few samples still has finite errors.
+func TestFirstOrderOfRareEvent(t *testing.T) {
+	f := func(in, out []float64) error { out[0] = math.Floor(in[0] + 0.002); return nil }
+	e, err := Run(ctx, uniform(1, 0, 1), []string{"y"}, f, &Settings{Samples: 1000})
+	require.NoError(t, err)
+	s, err := e.FirstOrder("y")
+	require.NoError(t, err)
+	require.False(t, math.IsNaN(s[0].First) || math.IsNaN(s[0].FirstError))
+}
+
 func TestQuantilesOfNormal(t *testing.T) {
 	normal := distuv.Normal{Mu: 3, Sigma: 2}
 	f := func(in, out []float64) error { out[0] = in[0]; return nil }
@@ -205,6 +259,13 @@ func TestFailures(t *testing.T) {
 	require.Equal(t, 100, s.Samples)
 	require.Less(t, s.Inputs[0], 0.2)
 
+	_, err = Run(ctx, in, []string{"y"}, func(_, _ []float64) error { return bad }, &Settings{Samples: 100, Failures: 0.9})
+	require.ErrorAs(t, err, &s)
+	require.Equal(t, 100, s.Failed)
+	require.Zero(t, s.Sample)
+	require.ErrorIs(t, err, bad)
+	require.ErrorContains(t, err, "100 of 100, first sample 0 with inputs")
+
 	_, err = Run(ctx, in, []string{"y"}, f, &Settings{Samples: 100, Failures: 0.19})
 	require.ErrorIs(t, err, ErrFailed)
 	e, err := Run(ctx, in, []string{"y"}, f, &Settings{Samples: 100, Failures: 0.2})
@@ -290,24 +351,27 @@ func TestErrorsNameTheField(t *testing.T) {
 	require.ErrorContains(t, err, "output y is constant")
 	_, err = Sobol(ctx, in, out, f, nil)
 	require.ErrorContains(t, err, "output y is constant")
-	for _, name := range []func() error{
-		func() error { _, err := e.Output("z"); return err },
-		func() error { _, err := e.Quantile("z", 0.5); return err },
-		func() error { _, _, _, err := e.Band("z", 0.5); return err },
-		func() error { _, err := e.Mean("z"); return err },
-		func() error { _, err := e.StdDev("z"); return err },
-		func() error { _, err := e.Above("z", 1); return err },
-		func() error { _, err := e.FirstOrder("z"); return err },
+	for _, name := range []func() (any, error){
+		func() (any, error) { return e.Output("z") },
+		func() (any, error) { return e.Quantile("z", 0.5) },
+		func() (any, error) { a, b, c, err := e.Band("z", 0.5); return a + b + c, err },
+		func() (any, error) { return e.Mean("z") },
+		func() (any, error) { return e.StdDev("z") },
+		func() (any, error) { return e.Above("z", 1) },
+		func() (any, error) { return e.FirstOrder("z") },
 	} {
-		require.ErrorContains(t, name(), `output is "z"`)
+		x, err := name()
+		require.ErrorContains(t, err, `output is "z"`)
+		require.Zero(t, x)
 	}
 	_, err = e.Input("z")
 	require.ErrorContains(t, err, `input is "z"`)
 	for _, p := range []float64{0, 1, math.NaN()} {
 		_, err = e.Quantile("y", p)
 		require.ErrorContains(t, err, "probability")
-		_, _, _, err = e.Band("y", p)
+		low, median, high, err := e.Band("y", p)
 		require.ErrorContains(t, err, "share")
+		require.Zero(t, [3]float64{low, median, high})
 	}
 	_, err = e.Probability(nil)
 	require.ErrorContains(t, err, "condition")
