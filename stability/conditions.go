@@ -16,10 +16,10 @@ type Conditions struct {
 	// is for the layer to say.
 	Bottom, Top Wall
 
-	// Viscosity is a law of the absolute temperature. nil means the uniform
-	// viscosity of the material; with a law, that is the one in the Rayleigh
-	// number.
-	Viscosity func(units.Temperature) units.DynamicViscosity
+	// RelativeViscosity is a law of the absolute temperature: viscosity over
+	// that of the material, which stays the one in the Rayleigh number and may
+	// be a range. nil means 1.
+	RelativeViscosity func(units.Temperature) float64
 
 	// TopExchange is the heat-transfer coefficient between the top and what
 	// is above, > 0. Zero means a top that keeps its temperature.
@@ -40,8 +40,7 @@ type problem struct {
 	biot     float64 // of the top, +Inf if isothermal
 	prandtl  float64 // where it matters
 	aspect   float64 // width over depth, 0 for a wide layer
-	hot, top float64 // scale and zero of temperature over the reference viscosity, where a law needs them
-	eta      float64
+	hot, top float64 // scale and zero of temperature, where a law of viscosity needs them
 }
 
 // A heating is a base state: the gradient is uniform + slope (z - 1/2).
@@ -92,8 +91,8 @@ func (c Conditions) pose(l boussinesq.Layer) (problem, float64, error) {
 			return problem{}, 0, err
 		}
 	}
-	if c.Viscosity != nil {
-		p.hot, p.top, p.eta = float64(scale), float64(l.Top), float64(l.Material.Viscosity)
+	if c.RelativeViscosity != nil {
+		p.hot, p.top = float64(scale), float64(l.Top)
 	}
 	return p, rayleigh, nil
 }
@@ -114,9 +113,9 @@ func (c Conditions) layer(p problem) Layer {
 	if p.flux {
 		l.Bottom = c.Bottom.FixedFlux()
 	}
-	if c.Viscosity != nil {
+	if c.RelativeViscosity != nil {
 		l.Viscosity = ViscosityLaw(func(_, t float64) float64 {
-			return float64(c.Viscosity(units.Temperature(p.top+t*p.hot))) / p.eta
+			return c.RelativeViscosity(units.Temperature(p.top + t*p.hot))
 		})
 	}
 	return l

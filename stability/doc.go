@@ -5,11 +5,12 @@
 // Small disturbances of the vertical velocity w and of the temperature θ, times
 // cos kx and exp(σt), obey
 //
-//	D²(η D²w) + … - (σ/Pr)(D²-k²)w = Ra k²θ      momentum, viscosity η(z)
-//	σθ = (D²-k²)θ + f w                           heat, f = -dT₀/dz
+//	(D²+k²) η (D²+k²)w - 4k² Dη Dw - (σ/Pr)(D²-k²)w = Ra k²θ   momentum, viscosity η(z)
+//	σθ = (D²-k²)θ + f w                                        heat, f = -dT₀/dz
 //
-// with D = d/dz. The smallest Rayleigh number Ra = ρ g α ΔT d³/(κ μ) at which any
-// of them is neutral, σ = 0 or σ imaginary, is critical:
+// where D = d/dz acts on all that follows it. The smallest Rayleigh number
+// Ra = ρ g α ΔT d³/(κ μ) at which any of them is neutral, σ = 0 or σ imaginary, is
+// critical:
 //
 //	onset, err := stability.Layer{Bottom: stability.Rigid, Top: stability.Free}.Critical()
 //

@@ -111,7 +111,7 @@ func TestOscillatingMode(t *testing.T) {
 	assert.InDelta(t, 0, quarter.Velocity(m.Peak()), 1e-13)
 }
 
-// At zero wavenumber, temperature is uniform and w = k² P with P”” = Ra.
+// At zero wavenumber, temperature is uniform and w = k² P with P⁗ = Ra.
 func TestModeAtZeroWavenumber(t *testing.T) {
 	o := critical(t, Layer{Bottom: Rigid.FixedFlux(), Top: Rigid.FixedFlux()})
 	m := o.Mode
@@ -132,5 +132,5 @@ func TestModeAtZeroWavenumber(t *testing.T) {
 	open := critical(t, Layer{Porous: Darcy, Bottom: Permeable, Top: Permeable})
 	require.True(t, open.LongWave())
 	assert.InDelta(t, 1, open.Mode.Velocity(0.2), 1e-13)
-	assert.InEpsilon(t, 0.5*0.2*0.8, open.Mode.Temperature(0.2), 1e-12) // θ” = -w
+	assert.InEpsilon(t, 0.5*0.2*0.8, open.Mode.Temperature(0.2), 1e-12) // θ″ = -w
 }

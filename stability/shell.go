@@ -250,7 +250,7 @@ func (s Shell) resolve() (*shellBound, []float64, int, error) {
 // A shellBound limits what disturbances of a shell can do. For a uniform
 // viscosity the dissipation of a harmonic, times L = l(l+1), is
 //
-//	∫ r²W”² + 2(L+1)W'² + L(L-2)W²/r² dr
+//	∫ r²W″² + 2(L+1)W'² + L(L-2)W²/r² dr
 //
 // under either mechanical condition: at least η times a multiple of ∫W²/r².
 type shellBound struct {
@@ -281,7 +281,7 @@ func (b *shellBound) growth(k float64, drive [3]float64) float64 {
 // system builds the equations of a shell. With U = W/r and X = W' + W/r, the
 // dissipation of a harmonic with L = l(l+1), times L, is
 //
-//	∫ η r² {2L U'Ũ' + (W”+(L-2)W/r²)(~) + (2/r²)[(L-1)XX̃ - L(UX̃+XŨ) + 2L UŨ]} dr
+//	∫ η r² {2L U'Ũ' + (W″+(L-2)W/r²)(~) + (2/r²)[(L-1)XX̃ - L(UX̃+XŨ) + 2L UŨ]} dr
 //
 // and k stands for √L.
 func (s Shell) system(still bool, scale float64, nodes []float64, degree int) *system {
@@ -330,14 +330,14 @@ func (s *system) shellFlow(viscosity func(float64) float64, prandtl float64) {
 		}
 	}
 	r2, r0, inv1, inv2 := times(2), times(0), times(-1), times(-2)
-	// L⁰: r²(W”-2W/r²)(~) - 2XX̃
+	// L⁰: r²(W″-2W/r²)(~) - 2XX̃
 	add(0, r2, 2, 2, 1)
 	add(0, r0, 2, 0, -2)
 	add(0, inv2, 0, 0, 4)
 	add(0, r0, 1, 1, -2)
 	add(0, inv1, 1, 0, -2)
 	add(0, inv2, 0, 0, -2)
-	// L¹: 2r²U'Ũ' + W”W̃ + WW̃” - 4WW̃/r² + 2XX̃ - 2(UX̃+XŨ) + 4UŨ
+	// L¹: 2r²U'Ũ' + W″W̃ + WW̃″ - 4WW̃/r² + 2XX̃ - 2(UX̃+XŨ) + 4UŨ
 	add(2, r0, 1, 1, 2)
 	add(2, inv1, 1, 0, -2)
 	add(2, inv2, 0, 0, 2)

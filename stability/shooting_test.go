@@ -15,7 +15,7 @@ import (
 // determinant of the conditions at the top: a route that shares nothing with
 // elements, weak forms and eigenvalue routines. The unknowns are
 //
-//	w, w', S = η(w”+k²w), N = S' - 4k²ηw', θ, θ', ζ, ηζ', s, s', b, b'
+//	w, w', S = η(w″+k²w), N = S' - 4k²ηw', θ, θ', ζ, ηζ', s, s', b, b'
 //
 // as many as the layer has.
 type shooting struct {
@@ -64,7 +64,7 @@ func (s *shooting) matrix(z float64, m *[width][width]complex128) {
 	m[iS][iN], m[iS][iU] = 1, 4*k2*eta
 	m[iN][iT] = complex(s.ra, 0) * k2
 	m[iN][iS] = -k2
-	drag := s.sigma * complex(s.inertia, 0) // (σ/Pr)(w” - k²w)
+	drag := s.sigma * complex(s.inertia, 0) // (σ/Pr)(w″ - k²w)
 	m[iN][iS] += drag / eta
 	m[iN][iW] -= 2 * k2 * drag
 	if s.ta > 0 {
@@ -78,7 +78,7 @@ func (s *shooting) matrix(z float64, m *[width][width]complex128) {
 		m[iCz][iC], m[iCz][iW] = k2+s.sigma/complex(s.tau, 0), complex(-1/s.tau, 0)
 	}
 	q := complex(s.q, 0)
-	m[iN][iS] += q / eta // Q w”
+	m[iN][iS] += q / eta // Q w″
 	m[iN][iW] -= q * k2
 	if s.induction > 0 {
 		m[iN][iBz] -= q * s.sigma * complex(s.induction, 0)

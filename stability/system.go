@@ -161,7 +161,7 @@ func layerSystem(l *Layer, base *baseState, eta *viscosityState, still bool, sca
 
 // stokes adds the viscous dissipation, its inertia and thermocapillarity:
 //
-//	∫ η [(w”+k²w)(v”+k²v) + 4k²w'v'] + (σ/Pr) ∫ (w'v'+k²wv) + k² Ma θ v'|₁
+//	∫ η [(w″+k²w)(v″+k²v) + 4k²w'v'] + (σ/Pr) ∫ (w'v'+k²wv) + k² Ma θ v'|₁
 func (s *system) stokes(l *Layer, viscosity int) {
 	fixed := func(w Wall) int {
 		if w == Rigid {

@@ -131,10 +131,8 @@ func TestConditions(t *testing.T) {
 	assert.InEpsilon(t, critical(t, Layer{Bottom: Rigid, Top: Free.Robin(7 * 0.1 / 0.35)}).Rayleigh, v.Critical, 1e-11)
 
 	// A viscosity law of temperature, on the viscosity of the material.
-	law := func(at units.Temperature) units.DynamicViscosity {
-		return units.DynamicViscosity(60 * math.Exp(-0.09*(at.Celsius()-30)))
-	}
-	v = judge(t, l, Conditions{Bottom: Rigid, Top: Rigid, Viscosity: law})
+	law := func(at units.Temperature) float64 { return math.Exp(-0.09 * (at.Celsius() - 30)) }
+	v = judge(t, l, Conditions{Bottom: Rigid, Top: Rigid, RelativeViscosity: law})
 	want := critical(t, Layer{Bottom: Rigid, Top: Rigid, Viscosity: Exponential(0.09*20, 0.5)})
 	assert.InEpsilon(t, want.Rayleigh, v.Critical, 1e-10)
 
@@ -155,7 +153,7 @@ func TestConditions(t *testing.T) {
 	for _, bad := range []Conditions{
 		{TopExchange: -1}, {TopExchange: units.HeatTransferCoefficient(math.Inf(1))}, {Width: -1},
 		{Width: units.Length(math.NaN())}, {Bottom: Permeable}, {Width: 1, Sides: 5},
-		{Viscosity: func(units.Temperature) units.DynamicViscosity { return -1 }},
+		{RelativeViscosity: func(units.Temperature) float64 { return -1 }},
 	} {
 		_, err := Judge(l, bad)
 		assert.Error(t, err, "%+v", bad)

@@ -9,7 +9,7 @@
 //
 //	C0: ψₙ' ∝ Pₙ₋₁, n = 2 … p      C1: χₙ'' ∝ Pₙ₋₂, n = 4 … p
 //
-// so that the matrices of ∫ψ'ψ' and ∫χ”χ” are diagonal on the bubbles and the
+// so that the matrices of ∫ψ'ψ' and ∫χ″χ″ are diagonal on the bubbles and the
 // condition numbers stay small at any degree (Szabó and Babuška, Finite Element
 // Analysis, 1991, ch. 3, from memory). Conditions on values and slopes are met
 // by leaving functions out; fluxes and stresses are natural conditions. No row

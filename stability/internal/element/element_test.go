@@ -200,7 +200,7 @@ func TestPointsIntegrate(t *testing.T) {
 	assert.InEpsilon(t, 102.4, sum, 1e-13)
 }
 
-// The eigenvalues of -u” = λu converge with the order 2p of the elements, those
+// The eigenvalues of -u″ = λu converge with the order 2p of the elements, those
 // of a clamped beam with the order 2(p-1).
 func TestOrderOfConvergence(t *testing.T) {
 	const p = 4

@@ -22,6 +22,6 @@
 //
 // defines a smooth function g(k, σ, R) that vanishes exactly where J is singular
 // (Griewank and Reddien 1984, from memory). With the left counterpart y its
-// derivatives are g' = -yᵀJ'x and g” = -yᵀ(J”x + 2J'x'). [Workspace.Solve] and
+// derivatives are g' = -yᵀJ'x and g″ = -yᵀ(J″x + 2J'x'). [Workspace.Solve] and
 // [Workspace.Extremum] are Newton's method on g and on its derivative in k.
 package pencil
