@@ -117,6 +117,23 @@ func TestAllCasesAreComplete(t *testing.T) {
 	assert.GreaterOrEqual(t, len(seen), 19)
 }
 
+func TestAllGivesAwayCopies(t *testing.T) {
+	for _, c := range exact.All() {
+		for i := range c.XLines {
+			c.XLines[i] = -1
+		}
+		for i := range c.Sheets {
+			c.Sheets[i].Force = -1
+		}
+	}
+	for _, c := range exact.All() {
+		assert.NotContains(t, c.XLines, -1.0)
+		for _, s := range c.Sheets {
+			assert.Equal(t, 1.0, s.Force)
+		}
+	}
+}
+
 // Viscosity jumps on the lines and the circle of a case, and nowhere else.
 func TestViscosityJumpsOnTheLinesOnly(t *testing.T) {
 	for _, c := range exact.All() {

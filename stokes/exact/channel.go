@@ -23,7 +23,7 @@ func (p Channel) Solve() (Solution, error) {
 	c := check{problem: "Channel"}
 	c.positive("Height", p.Height)
 	c.positive("AtBottom", p.AtBottom)
-	c.positive("AtTop", p.AtTop)
+	c.ratio("AtTop", p.AtTop, p.AtBottom)
 	c.finite("VBottom", p.VBottom)
 	c.finite("VTop", p.VTop)
 	c.finite("PressureGradient", p.PressureGradient)

@@ -33,6 +33,13 @@ func (c *check) notZero(name string, v float64) {
 	c.require(isFinite(v) && v != 0, name, v, "not 0 and finite")
 }
 
+// ratio checks two positive numbers whose ratio must be one too.
+func (c *check) ratio(name string, v, base float64) {
+	c.positive(name, v)
+	q := v / base
+	c.require(isFinite(q) && q > 0, name, v, "a number whose ratio to the other viscosity neither overflows nor vanishes")
+}
+
 // wall checks one that must be free slip or no slip.
 func (c *check) wall(name string, w Wall) {
 	c.require(w == FreeSlip || w == NoSlip, name, w, "FreeSlip or NoSlip")

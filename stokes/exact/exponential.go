@@ -22,7 +22,7 @@ func (p ExponentialViscosity) Solve() (Solution, error) {
 	c := check{problem: "ExponentialViscosity"}
 	c.positive("Height", p.Height)
 	c.positive("AtBottom", p.AtBottom)
-	c.positive("AtTop", p.AtTop)
+	c.ratio("AtTop", p.AtTop, p.AtBottom)
 	c.positive("KX", p.KX)
 	c.positive("KZ", p.KZ)
 	c.notZero("Force", p.Force)

@@ -8,8 +8,8 @@ import "math"
 // c = π/Height and stream function ψ, vx = ∂ψ/∂z, vz = −∂ψ/∂x, the flow is
 // for Walls of kind
 //
-//	FreeSlip   ψ ∝ sin 2ax sin cz       g = cos ax sin(cz + π/4)
-//	NoSlip     ψ ∝ sin² ax sin² cz      g = sin(ax + 1) cos cz
+//	FreeSlip   ψ ∝ sin 2ax sin cz          g = cos ax sin(cz + π/4)
+//	NoSlip     ψ ∝ sin² ax sin² cz         g = sin(ax + 1) cos cz
 //	Periodic   ψ ∝ sin(2ax + ½) sin² cz    g = cos 2ax cos cz
 //
 // with the factor Velocity·Height/π, the viscosity is

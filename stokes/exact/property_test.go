@@ -171,6 +171,41 @@ func TestManufacturedContrast(t *testing.T) {
 	}
 }
 
+// Manufactured flows are those that their documentation describes.
+func TestManufacturedFormulas(t *testing.T) {
+	const width, height, eta, contrast, velocity = 2.0, 0.5, 3.0, 1e3, 0.7
+	a, c := math.Pi/width, math.Pi/height
+	sin, cos := math.Sin, math.Cos
+	for walls, f := range map[exact.Wall]struct{ psi, g func(x, z float64) float64 }{
+		exact.FreeSlip: {
+			func(x, z float64) float64 { return sin(2*a*x) * sin(c*z) },
+			func(x, z float64) float64 { return cos(a*x) * sin(c*z+math.Pi/4) },
+		},
+		exact.NoSlip: {
+			func(x, z float64) float64 { return sin(a*x) * sin(a*x) * sin(c*z) * sin(c*z) },
+			func(x, z float64) float64 { return sin(a*x+1) * cos(c*z) },
+		},
+		exact.Periodic: {
+			func(x, z float64) float64 { return sin(2*a*x+0.5) * sin(c*z) * sin(c*z) },
+			func(x, z float64) float64 { return cos(2*a*x) * cos(c*z) },
+		},
+	} {
+		s := solve(t, exact.Manufactured{Walls: walls, Width: width, Height: height, Viscosity: eta, Contrast: contrast, Velocity: velocity})
+		for _, p := range points(exact.Case{Box: exact.Box{Right: width, Top: height}}, 20) {
+			x, z := p[0], p[1]
+			got := s.At(x, z)
+			factor := velocity * height / math.Pi
+			vx := derivative(func(z float64) float64 { return factor * f.psi(x, z) }, z, 0.05)
+			vz := -derivative(func(x float64) float64 { return factor * f.psi(x, z) }, x, 0.05)
+			assert.InDelta(t, vx, got.VX, 1e-10, walls)
+			assert.InDelta(t, vz, got.VZ, 1e-10, walls)
+			assert.InEpsilon(t, eta*math.Pow(contrast, 0.5*(1+f.g(x, z))), s.Viscosity(x, z), 1e-12, walls)
+			pressure := math.Sqrt(contrast) * eta * velocity / height * sin(2*a*x+1) * sin(c*z+1)
+			assert.InDelta(t, pressure, got.P, 1e-11, walls)
+		}
+	}
+}
+
 // The plates of a corner move as they should, from edge to edge.
 func TestCornerPlates(t *testing.T) {
 	plates := []exact.Corner{

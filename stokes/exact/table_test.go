@@ -126,3 +126,30 @@ func TestTabulatedLayers(t *testing.T) {
 		}
 	}
 }
+
+// The cases are what they were when their values were recorded, so that figures
+// obtained with them stay comparable. Whether they are right is for the other
+// tests to say.
+func TestCasesAreAsRecorded(t *testing.T) {
+	rows := table(t, "testdata/cases.csv")
+	cases := exact.All()
+	require.Len(t, rows, len(cases))
+	for i, c := range cases {
+		row := rows[i]
+		require.Equal(t, row["case"], c.Name)
+		x, z := c.Box.Left+0.375*c.Box.Width(), c.Box.Bottom+0.625*c.Box.Height()
+		f := c.At(x, z)
+		speed, stress := scales(c)
+		for _, q := range []struct {
+			name       string
+			got, scale float64
+		}{
+			{"vx", f.VX, speed}, {"vz", f.VZ, speed}, {"p", f.P, stress},
+			{"viscosity", c.Viscosity(x, z), c.Viscosity(x, z)},
+		} {
+			if want := number(t, row[q.name]); !(math.Abs(q.got-want) <= 1e-6*q.scale) {
+				t.Errorf("%s: %s = %.7g, recorded %.7g", c.Name, q.name, q.got, want)
+			}
+		}
+	}
+}

@@ -2,6 +2,7 @@ package laminate
 
 import (
 	"math"
+	"math/rand/v2"
 	"testing"
 
 	"github.com/stretchr/testify/assert"
@@ -81,4 +82,78 @@ func TestRoundingErrorIsEstimated(t *testing.T) {
 		assert.Less(t, wrong, 20*estimate)
 		assert.Greater(t, wrong, 1e-3*estimate)
 	}
+}
+
+// One plane, one homogeneous solution of amplitude one, given by 1·x = 1.
+func TestRoundingErrorOfOnePlane(t *testing.T) {
+	estimate := func(plane face) float64 {
+		m := newBand(1)
+		m.set(0, 0, 1)
+		m.solveRefined([]float64{1})
+		return (&conditions{matrix: m, planes: []*face{&plane}}).roundingError([]float64{1})
+	}
+	// 1 − ½: errors ε(1 + ½) of the sum and ε½ of the amplitude, over ½.
+	velocity := face{given: traction{velocityAlong: 1}, basis: []traction{{velocityAlong: -0.5}}, unit: 1e9}
+	assert.Equal(t, 4*epsilon, estimate(velocity))
+	across := face{given: traction{velocityAcross: 1, velocityAlong: 0.25}, basis: []traction{{velocityAcross: -0.5}}, unit: 1e9}
+	assert.Equal(t, 4*epsilon, estimate(across))
+	// The same of the stress, first against itself and then against the
+	// stress 2ηkU that goes with the velocity.
+	stress := face{given: traction{stressAlong: 1, velocityAlong: 1e-9}, basis: []traction{{stressAlong: -0.5}}, unit: 1}
+	assert.Equal(t, 4*epsilon, estimate(stress))
+	stress.unit = 2e9
+	assert.InEpsilon(t, epsilon, estimate(stress), 1e-9)
+	assert.Zero(t, estimate(face{basis: []traction{{}}, unit: 1}))
+}
+
+// The error comes where the estimate passes the tolerance: here a force that
+// the pressure balances but for a share d of it.
+func TestRoundingTolerance(t *testing.T) {
+	for _, tt := range []struct {
+		d  float64
+		ok bool
+	}{{1e-3, true}, {1e-5, true}, {1e-8, false}, {1e-12, false}} {
+		p := Problem{K: 1, Layers: []Layer{
+			{Thickness: 1, Viscosity: 1, Along: Profile{Mean: 1}},
+			{Thickness: 1, Viscosity: 2, Along: Profile{Mean: 1 + tt.d}},
+		}}
+		f, err := Solve(p)
+		if tt.ok {
+			assert.NoError(t, err)
+			continue
+		}
+		var e *RoundingError
+		require.ErrorAs(t, err, &e)
+		assert.Greater(t, e.Estimate, RoundingTolerance)
+		assert.InDelta(t, 0, math.Log10(e.Estimate*tt.d/epsilon), 1.5, "estimate of about ε/d")
+		assert.Nil(t, f)
+		assert.Contains(t, err.Error(), "want at most 1e-09")
+	}
+}
+
+// Random stacks, longer and shorter than the waves, with viscosities up to 1e10
+// apart, are solved with errors that stay below 1e-12 by estimate.
+func TestRandomStacksKeepTheirDigits(t *testing.T) {
+	random := rand.New(rand.NewPCG(3, 4))
+	worst := 0.0
+	for range 300 {
+		n := 1 + random.IntN(20)
+		p := Problem{
+			K:    math.Pow(10, -4+8*random.Float64()),
+			Low:  End(random.IntN(2)),
+			High: End(random.IntN(3)),
+		}
+		for range n {
+			p.Layers = append(p.Layers, Layer{
+				Thickness: (0.01 + random.Float64()) / float64(n),
+				Viscosity: math.Pow(10, 10*random.Float64()),
+				Growth:    float64(n*random.IntN(2)) * 2 * random.NormFloat64(),
+				Across:    Profile{Mean: random.NormFloat64(), Sine: random.NormFloat64(), Wavenumber: 10 * random.Float64()},
+			})
+		}
+		_, e := lay(p).solve(p)
+		worst = max(worst, e)
+	}
+	t.Logf("largest estimate %.1e", worst)
+	assert.Less(t, worst, 1e-12)
 }
