@@ -88,6 +88,7 @@ func (t *Team) Run(task func(part int)) {
 			runtime.Gosched()
 		}
 	}
+	w.task = nil // it may refer to the Team, which would then never be garbage
 }
 
 func (t *Team) start() {

@@ -47,7 +47,9 @@ func TestPartsRunAtTheSameTime(t *testing.T) {
 
 func TestMembersEndWithTheirTeam(t *testing.T) {
 	before := runtime.NumGoroutine()
-	team.New(4).Run(func(int) {})
+	tm := team.New(4)
+	tm.Run(func(int) { _ = tm.Size() }) // a task that refers to its team
+	tm = nil
 	for range 100 {
 		runtime.GC()
 		time.Sleep(5 * time.Millisecond)
