@@ -33,7 +33,7 @@
 // smoother of Brandt & Dinar (1979), its corrections weighted by the inverse
 // diagonal of the momentum equations; cells near jumps of viscosity are
 // relaxed as Vanka (1986) does. Thin cells are coarsened first, so that flat
-// cells and graded grids cost no iterations. Time and memory are proportional
+// cells and graded grids cost few iterations. Time and memory are proportional
 // to the number of cells: about eight cycles to 1e-8 at any size, for smooth
 // viscosities of any contrast. Where the viscosity depends on depth alone,
 // [Transform] is about five times as fast and taken without being asked for.
@@ -41,7 +41,8 @@
 // # Concurrency
 //
 // A [Solver] serves one goroutine at a time; two of them share nothing. The
-// answer is the same to the bit for any number of [Settings].Workers.
+// answer is the same to the bit for any number of [Settings].Workers. The
+// goroutines of a solver sleep between solves and end when it is garbage.
 //
 // # Limits
 //

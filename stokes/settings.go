@@ -45,7 +45,7 @@ type Settings struct {
 const (
 	DefaultTolerance     = 1e-8
 	DefaultMaxIterations = 200
-	DefaultMaxBasis      = 100
+	DefaultMaxBasis      = 200
 )
 
 // A Mean is a kind of average of viscosities.
