@@ -31,6 +31,14 @@ type vtkArray struct {
 	values     []float64
 }
 
+// size returns how many numbers the array must hold on g.
+func (a vtkArray) size(g *Grid) int {
+	if a.onCorners {
+		return a.components * (g.NX() + 1) * (g.NZ() + 1)
+	}
+	return a.components * g.NX() * g.NZ()
+}
+
 // WriteVTK writes the grid and the fields on it as a VTK XML RectilinearGrid
 // file (customary suffix .vtr), an open format that general-purpose
 // visualisation programs read. A Scalar becomes cell data, a Nodal point data;
@@ -39,7 +47,7 @@ type vtkArray struct {
 // little-endian float64 in base64, so that nothing is lost.
 //
 // It fails when names are empty or repeated, when a field lives on another
-// grid, and when w does.
+// grid or does not fill its own, and when w does.
 func WriteVTK(w io.Writer, g *Grid, fields ...Field) error {
 	var cells, corners []vtkArray
 	seen := map[string]bool{}
@@ -56,6 +64,9 @@ func WriteVTK(w io.Writer, g *Grid, fields ...Field) error {
 				return fmt.Errorf("staggered: field name %q is empty or repeated", a.name)
 			}
 			seen[a.name] = true
+			if want := a.size(g); len(a.values) != want {
+				return fmt.Errorf("staggered: field %q holds %d numbers, want %d", a.name, len(a.values), want)
+			}
 			if a.onCorners {
 				corners = append(corners, a)
 			} else {
@@ -126,6 +137,10 @@ func (f *Flow) vtkArrays(name string, g *Grid) ([]vtkArray, error) {
 		return nil, fmt.Errorf("staggered: field %q lives on another grid", name)
 	}
 	nx, nz := g.Cells()
+	if n := (nx + 1) * nz; len(f.VX) != n || len(f.VZ) != nx*(nz+1) {
+		return nil, fmt.Errorf("staggered: field %q holds %d numbers for vx and %d for vz, want %d and %d",
+			name, len(f.VX), len(f.VZ), n, nx*(nz+1))
+	}
 	velocity := make([]float64, 0, 3*nx*nz)
 	for k := range nz {
 		for i := range nx {

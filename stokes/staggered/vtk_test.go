@@ -103,6 +103,9 @@ func TestWriteVTKRefusesBadFields(t *testing.T) {
 		`"n" lives on another`:     {{Name: "n", Data: staggered.NewNodal(elsewhere)}},
 		`"v" lives on another`:     {{Name: "v", Data: staggered.NewFlow(elsewhere)}},
 		`"u" has no data`:          {{Name: "u"}},
+		`"s" holds 5 numbers`:      {{Name: "s", Data: &staggered.Scalar{Grid: g, Values: make([]float64, 5)}}},
+		`"m" holds 6 numbers`:      {{Name: "m", Data: &staggered.Nodal{Grid: g, Values: make([]float64, 6)}}},
+		`"w" holds 6 numbers`:      {{Name: "w", Data: &staggered.Flow{Grid: g, VX: make([]float64, 6)}}},
 	} {
 		var b bytes.Buffer
 		assert.ErrorContains(t, staggered.WriteVTK(&b, g, fields...), want)

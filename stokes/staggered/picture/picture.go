@@ -41,9 +41,9 @@ type Settings struct {
 }
 
 // Draw returns a picture of the field, interpolated between cell centres. It
-// fails on a field without a finite value, on a range Low to High that is not
-// finite or runs backwards, and on a picture of more than [MaxPixels] pixels or
-// so flat that its height is less than one.
+// fails on a field with a NaN, on a range Low to High that is not finite or runs
+// backwards, on a stream function in another box, and on a picture of more than
+// [MaxPixels] pixels or so flat that its height is less than one.
 func Draw(s *staggered.Scalar, settings *Settings) (image.Image, error) {
 	d, err := newDrawing(s, settings)
 	if err != nil {
@@ -85,6 +85,9 @@ func newDrawing(s *staggered.Scalar, settings *Settings) (*drawing, error) {
 	if d.Width < 1 || d.Lines < 1 {
 		return nil, fmt.Errorf("picture: width %d and lines %d, want both > 0", d.Width, d.Lines)
 	}
+	if err := checkFields(s, d.Stream); err != nil {
+		return nil, err
+	}
 	d.width = d.Width
 	height := math.Round(float64(d.width) * s.Grid.Height() / s.Grid.Width())
 	if !(height >= 1 && height*float64(d.width) <= MaxPixels) {
@@ -94,9 +97,38 @@ func newDrawing(s *staggered.Scalar, settings *Settings) (*drawing, error) {
 	return d, errors.Join(d.setRange(), d.setLines())
 }
 
+// checkFields looks that the fields are whole and lie in one box.
+func checkFields(s *staggered.Scalar, stream *staggered.Nodal) error {
+	if s == nil || s.Grid == nil {
+		return errors.New("picture: field has no grid")
+	}
+	nx, nz := s.Grid.Cells()
+	if len(s.Values) != nx*nz {
+		return fmt.Errorf("picture: field holds %d values, want %d", len(s.Values), nx*nz)
+	}
+	if stream == nil {
+		return nil
+	}
+	if stream.Grid == nil {
+		return errors.New("picture: stream function has no grid")
+	}
+	g, h := stream.Grid, s.Grid
+	nx, nz = g.Cells()
+	if len(stream.Values) != (nx+1)*(nz+1) {
+		return fmt.Errorf("picture: stream function holds %d values, want %d", len(stream.Values), (nx+1)*(nz+1))
+	}
+	if g.Width() != h.Width() || g.Height() != h.Height() {
+		return fmt.Errorf("picture: stream function lives on a box of %vx%v, want %vx%v", g.Width(), g.Height(), h.Width(), h.Height())
+	}
+	return nil
+}
+
 func (d *drawing) setRange() error {
+	lowest, highest := d.field.Extrema()
+	if math.IsNaN(lowest.Value) {
+		return fmt.Errorf("picture: field is NaN at x = %v, z = %v", lowest.X, lowest.Z)
+	}
 	if d.Low == 0 && d.High == 0 {
-		lowest, highest := d.field.Extrema()
 		d.Low, d.High = lowest.Value, highest.Value
 	}
 	if math.IsNaN(d.High-d.Low) || math.IsInf(d.High-d.Low, 0) || d.High < d.Low {
