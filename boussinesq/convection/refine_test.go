@@ -56,3 +56,54 @@ func TestUncertaintyKnowsNoZeroOfTemperature(t *testing.T) {
 		assert.InEpsilon(t, x.Uncertainty, y.Uncertainty, 1e-2, name)
 	}
 }
+
+// studyOf is a study of made-up diagnostics on cells of size 1/8, 1/16, 1/32.
+func studyOf(t *testing.T, of func(h float64) Diagnostics) *Study {
+	t.Helper()
+	study := &Study{}
+	for _, n := range []int{8, 16, 32} {
+		study.Solutions = append(study.Solutions,
+			&Solution{Diagnostics: of(1 / float64(n)), Temperature: staggered.NewScalar(square(t, n))})
+	}
+	require.NoError(t, study.estimate())
+	return study
+}
+
+func TestStudyEstimatesEachDiagnosticOnce(t *testing.T) {
+	study := studyOf(t, func(h float64) Diagnostics {
+		// The second is settled on the two finest grids, all others are zero.
+		return Diagnostics{NuTop: 3 + 2*h*h, SurfaceVelocity: 7 + max(0, h-1.0/16)}
+	})
+	var names []string
+	for name := range (Diagnostics{}).All() {
+		names = append(names, name)
+	}
+	for i, e := range study.Estimates {
+		require.Less(t, i, len(names))
+		assert.Equal(t, names[i], e.Name)
+	}
+	assert.Len(t, study.Estimates, len(names))
+	assert.InDelta(t, 0, study.Deviation, 1e-9, "what does not change has no order")
+	nu, _ := study.Get("NuTop")
+	assert.InDelta(t, 3, nu.Value, 1e-12)
+	assert.InEpsilon(t, 0.02*2/1024, nu.Uncertainty, 1e-6)
+}
+
+// One diagnostic of order 1.6 puts the error bars of all in doubt.
+func TestWorstDiagnosticCountsForAll(t *testing.T) {
+	study := studyOf(t, func(h float64) Diagnostics {
+		return Diagnostics{NuTop: 3 + 2*h*h, RMSVelocity: 5 + math.Pow(h, 1.6)}
+	})
+	assert.InDelta(t, 0.4, study.Deviation, 1e-9)
+	nu, _ := study.Get("NuTop")
+	assert.InEpsilon(t, 3*0.16*2/1024, nu.Uncertainty, 1e-6)
+	study = studyOf(t, func(h float64) Diagnostics {
+		return Diagnostics{NuTop: 3 + 2*h*h, RMSVelocity: 5 + math.Cos(16*math.Pi*h)}
+	})
+	assert.Equal(t, 1.0, study.Deviation, "one that does not converge")
+}
+
+func TestStudyWithoutGrid(t *testing.T) {
+	_, err := Refine(context.Background(), Problem{}, 2, nil)
+	assert.ErrorContains(t, err, "Grid is nil")
+}
