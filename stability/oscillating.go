@@ -9,9 +9,11 @@ import (
 )
 
 const (
-	// hopfRatio separates the values of a number at which growing
-	// oscillations are looked for.
-	hopfRatio = 1.6
+	// hopfRatio separates the values of a number at which growth is looked for
+	// below the stationary onset, and hopfWindow those above it, where an
+	// oscillation may grow in a window only.
+	hopfRatio  = 3.0
+	hopfWindow = 1.5
 	// hopfWidth is the relative width to which the onset of an oscillation is
 	// bracketed before Newton's method takes over.
 	hopfWidth = 1e-3
@@ -84,7 +86,23 @@ func (q *question) oscillationAt(k, limit float64, level int) (sample, float64, 
 		return none(k), 0, err
 	}
 	calm = max(calm, wild/hopfRatio)
-	for wild-calm > hopfWidth*wild {
+	lv := q.moving.level(level)
+	for {
+		// Newton's method from the growing mode, then a look just below: if
+		// something grows there, another mode was first.
+		if at, ok := q.neutralOscillation(k, wild, sigma, calm, level); ok {
+			tail := lv.tail()
+			below := at.value * (1 - 1e-6)
+			other, err := q.fastestOf(k, below, level, below > still)
+			if err != nil || other == 0 {
+				return at, tail, err
+			}
+			wild, sigma = below, other
+			continue
+		}
+		if wild-calm <= hopfWidth*wild {
+			return sample{k: k, value: wild, omega: imag(sigma), slope: math.NaN(), level: level}, 0, nil
+		}
 		m := (calm + wild) / 2
 		at, err := q.fastestOf(k, m, level, m > still)
 		if err != nil {
@@ -96,15 +114,22 @@ func (q *question) oscillationAt(k, limit float64, level int) (sample, float64, 
 			wild, sigma = m, at
 		}
 	}
+}
+
+// neutralOscillation follows a mode that grows at a value to where it is neutral,
+// if that is between a value where nothing grows and this one.
+func (q *question) neutralOscillation(k, wild float64, sigma complex128, calm float64, level int) (sample, bool) {
+	if imag(sigma) == 0 {
+		return sample{}, false
+	}
 	pt := q.point(k, wild)
 	pt.Sigma = complex(0, imag(sigma))
-	lv := q.moving.level(level)
-	s, err := lv.work.Solve(q.curve(pencil.MarginalOscillation), pt)
+	s, err := q.moving.level(level).work.Solve(q.curve(pencil.MarginalOscillation), pt)
 	value := s.Drive[driveOf(q.number)]
-	if err != nil || math.Abs(value-wild) > 10*hopfWidth*wild || !(imag(s.Sigma) > 0) {
-		return sample{k: k, value: wild, omega: imag(sigma), slope: math.NaN(), level: level}, 0, nil
+	if err != nil || !(value > calm && value <= wild*(1+hopfWidth) && imag(s.Sigma) > 0) {
+		return sample{}, false
 	}
-	return sample{k: k, value: value, omega: imag(s.Sigma), slope: s.Slope, level: level}, lv.tail(), nil
+	return sample{k: k, value: value, omega: imag(s.Sigma), slope: s.Slope, level: level}, true
 }
 
 // stationaryBelow returns the stationary neutral value at a wavenumber, or +Inf.
@@ -132,7 +157,11 @@ func (q *question) firstOscillation(k, calm, limit, still float64, level int) (f
 		value = limit / 1e6
 	}
 	for value < limit {
-		next := min(value*hopfRatio, limit)
+		ratio := hopfRatio
+		if value >= still {
+			ratio = hopfWindow
+		}
+		next := min(value*ratio, limit)
 		if value < still && still < next {
 			next = still // the last value at which any growth tells
 		}

@@ -193,6 +193,43 @@ func TestFreeOscillations(t *testing.T) {
 	}
 }
 
+// rotatingFreeOnset minimises the closed forms of the stationary and the
+// oscillatory neutral curve between free boundaries over a fine grid.
+func rotatingFreeOnset(ta, pr float64) (least float64, oscillates bool) {
+	least = math.Inf(1)
+	p2 := math.Pi * math.Pi
+	for k := 0.5; k < 60; k *= 1.0005 {
+		a := p2 + k*k
+		if ra := (a*a*a + ta*p2) / (k * k); ra < least {
+			least, oscillates = ra, false
+		}
+		// The imaginary part of Ra vanishes for d = ω²/Pr² + a².
+		d := ta * p2 * (1/pr - 1) / (a * (1 + 1/pr))
+		omega2 := (d - a*a) * pr * pr
+		if omega2 <= 0 {
+			continue
+		}
+		if ra := (a*(a*a-omega2/pr) + ta*p2*(a*a+omega2/pr)/d) / (k * k); ra < least {
+			least, oscillates = ra, true
+		}
+	}
+	return least, oscillates
+}
+
+// The first onset of a rotating layer is the right one of two branches, over
+// five decades of the Taylor number and two of the Prandtl number.
+func TestFirstOnsetOfRotatingLayers(t *testing.T) {
+	for _, ta := range []float64{30, 900, 4e3, 2e4, 1.1e5} {
+		for _, pr := range []float64{0.01, 0.06, 0.3, 0.62, 0.68, 3} {
+			want, oscillates := rotatingFreeOnset(ta, pr)
+			o := critical(t, Layer{Taylor: ta, Prandtl: pr})
+			assert.InEpsilon(t, want, o.Value, 1e-6, "Ta = %g, Pr = %g", ta, pr)
+			assert.Equal(t, oscillates, o.Oscillates(), "Ta = %g, Pr = %g", ta, pr)
+			assert.LessOrEqual(t, o.Value, want*(1+1e-12), "a grid is not below the minimum")
+		}
+	}
+}
+
 // At the first onset nothing grows just below, at any wavenumber, and something
 // does just above: for layers whose neutral curves have more than one minimum, or
 // whose onset oscillates.
