@@ -173,6 +173,21 @@ func TestUncertaintyHoldsOnCoarseGrids(t *testing.T) {
 	}
 }
 
+// Little above onset, grids of few cells are below theirs. A state at rest that
+// the coarsest hands on is steady on all, but none that a layer stays in.
+func TestCoarseGridsAtRestDoNotDecide(t *testing.T) {
+	want := references(t)["n16"]["NuTop"]
+	for rows, grids := range map[int]int{16: 3, 24: 2, 32: 4} {
+		g, err := staggered.Uniform(rows, rows, math.Sqrt2, 1)
+		require.NoError(t, err)
+		study, err := convection.Refine(context.Background(), convection.Problem{Grid: g, Rayleigh: 700}, grids, nil)
+		require.NoError(t, err)
+		assert.Greater(t, study.Solutions[grids-1].NuTop, 1.1)
+		e, _ := study.Get("NuTop")
+		assert.InDelta(t, want, e.Value, e.Uncertainty, "%d rows: %v", rows, e)
+	}
+}
+
 func TestStudiesWantNestedGrids(t *testing.T) {
 	g, err := staggered.Uniform(36, 34, 1, 1)
 	require.NoError(t, err)

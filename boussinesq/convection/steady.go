@@ -166,6 +166,11 @@ func steadySequence(ctx context.Context, p Problem, s SteadySettings, grids int)
 		level := p
 		level.Grid = g
 		sol, err := steadyOn(ctx, level, s, guess)
+		if err == nil && guess != nil && s.Guess == nil && sol.atRest(&level) {
+			// Rest is steady at any Rayleigh number, and a coarser grid may have
+			// been below its onset: the initial state decides on each grid.
+			sol, err = steadyOn(ctx, level, s, nil)
+		}
 		if sol != nil {
 			solutions = append(solutions, sol)
 		}
@@ -175,6 +180,13 @@ func steadySequence(ctx context.Context, p Problem, s SteadySettings, grids int)
 		guess = sol.Temperature
 	}
 	return solutions, nil
+}
+
+// restSpeed is the speed in κ/d below which a state is at rest.
+const restSpeed = 1e-3
+
+func (s *Solution) atRest(p *Problem) bool {
+	return s.RMSVelocity*p.Grid.Height() < restSpeed*p.diffusivity()
 }
 
 // worthCoarsening reports whether to start on a grid of half the cells.
