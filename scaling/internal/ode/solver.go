@@ -282,17 +282,19 @@ func (s *Solver) newton() bool {
 			}
 		}
 		substitute(s.lu, s.perm, s.dz, stages*n)
-		size := 0.0
+		size := 0.0      // of the correction, in tolerances
+		rounding := true // whether it is the last digits only
 		for i := range s.z {
 			s.z[i] += s.dz[i]
-			scale := s.scale(i % n)
-			size = math.Max(size, math.Abs(s.dz[i])/scale)
+			d := math.Abs(s.dz[i])
+			size = math.Max(size, d/s.scale(i%n))
+			rounding = rounding && d <= roundOff*math.Abs(s.y[i%n])
 		}
 		rate := size / prev
 		switch {
 		case math.IsNaN(size) || math.IsInf(size, 0):
 			return false
-		case size < newtonTolerance || size < roundOff/s.Tol.Relative:
+		case size < newtonTolerance || rounding:
 			return true
 		case iter > 0 && rate < 1 && size*rate/(1-rate) < newtonTolerance:
 			return true

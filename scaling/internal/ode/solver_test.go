@@ -256,6 +256,42 @@ func TestTableau(t *testing.T) {
 	require.InDelta(t, 1/float64(stages*stages), tab.a[stages-1][stages-1], 1e-14)
 }
 
+// The weight of the defect is the largest value of its integral over a step,
+// here by brute force.
+func TestDenseWeight(t *testing.T) {
+	tab := radau()
+	const n = 100000
+	sum, largest := 0.0, 0.0
+	for i := range n {
+		product := 1.0
+		for _, c := range tab.c {
+			product *= 1 - (float64(i)+0.5)/n/c
+		}
+		sum += product / n
+		largest = math.Max(largest, math.Abs(sum))
+	}
+	require.InDelta(t, largest, tab.dense, 1e-8)
+}
+
+// The estimate of a stiff component is filtered by 1/(1 - h dense J): for
+// y' = -λ(y-1) the defect of z at the start is known.
+func TestDenseErrorIsFiltered(t *testing.T) {
+	const lambda, h = 50.0, 0.3
+	s := NewSolver(1, 0)
+	s.Tol = Tolerance{0, 1}
+	s.Start(rates(func(dst, y []float64, _ float64) { dst[0] = -lambda * (y[0] - 1) }), 0, []float64{2}, 1)
+	s.h = h
+	s.jacobian()
+	s.factor()
+	require.True(t, s.newton())
+	slope := 0.0
+	for i := range stages {
+		slope += s.tab.start[i] * s.z[i]
+	}
+	want := math.Abs(s.tab.dense * (slope + h*lambda) / (1 + h*lambda*s.tab.dense))
+	require.InEpsilon(t, want, s.denseError(), 1e-6)
+}
+
 func TestDecompose(t *testing.T) {
 	a := []float64{0, 2, 1, 4, -1, 0, 2, 2, 3}
 	b := []float64{7, 2, 15} // of x = 1, 2, 3
