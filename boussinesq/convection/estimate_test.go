@@ -63,6 +63,7 @@ func TestOtherOrdersAreNotBelieved(t *testing.T) {
 		require.NoError(t, err)
 		assert.Equal(t, v[2], e.Value)
 		assert.Greater(t, e.Uncertainty, math.Abs(v[2]-2))
+		assert.Less(t, e.Uncertainty, 8*math.Abs(v[2]-2), "three times 7/3, the most that order 2 makes of order 3")
 		assert.InDelta(t, p, e.Order, 1e-6)
 	}
 	e, err := Extrapolate([]float64{0.4, 0.2, 0.1}, []float64{1, 2, 1.5})
