@@ -12,19 +12,20 @@ func root(lo, hi float64, f func(x float64) (value, slope float64)) float64 {
 	x := hi
 	for range rootSteps {
 		value, slope := f(x)
-		switch {
-		case value == 0:
-			return x
-		case value > 0:
+		step := value / slope
+		if math.Abs(step) <= 2e-16*math.Abs(x) {
+			return x // here rounding decides on the sign of the value
+		}
+		if value > 0 {
 			lo = x
-		default:
+		} else {
 			hi = x
 		}
-		next := x - value/slope
+		next := x - step
 		if !(next > lo && next < hi) {
 			next = 0.5 * (lo + hi)
 		}
-		if math.Abs(next-x) <= 2e-16*math.Abs(x) || next == lo || next == hi {
+		if next == lo || next == hi {
 			return next
 		}
 		x = next

@@ -96,6 +96,14 @@ func TestRoot(t *testing.T) {
 	})
 	near(t, 0.7, got, 3e-16, "root")
 	assert.Less(t, calls, 30)
+	calls = 0
+	got = root(0, math.Sqrt(0.5), func(l float64) (float64, float64) { // Stefan number 1
+		calls++
+		erf := math.Erf(l)
+		return -math.Log(sqrtPi*l*erf) - l*l, -1/l - 2*gauss(l)/(sqrtPi*erf) - 2*l
+	})
+	near(t, 0.6200626333136, got, 1e-13, "λ")
+	assert.Less(t, calls, 8, "rounding at the root must not send the search away")
 	assert.Equal(t, 2.0, root(0, 2, func(x float64) (float64, float64) { return 2 - x, -1 }), "the end of the bracket")
 	got = root(0, 3, func(x float64) (float64, float64) { return 1 - x*x*x, 0 }) // no slope: bisection
 	near(t, 1, got, 5e-16, "root by bisection")
