@@ -38,7 +38,7 @@
 //
 // On each case, the order of convergence between the last two grids against
 // what [Expected] says of a second-order scheme or Settings.Expect of yours. On
-// its coarsest grid:
+// its coarsest grid, the last one on its finest:
 //
 //	mirrored in x, in z     the mirror image of the problem has the mirror image of the answer
 //	in other units          so has the problem in units that differ by powers of two, as if from

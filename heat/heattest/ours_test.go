@@ -112,12 +112,92 @@ func walls(p heattest.Problem, t float64) heat.Walls {
 	}
 }
 
-func TestOurSolverConforms(t *testing.T) {
-	r, err := heattest.Run(t.Context(), adapter{settings: heat.Settings{Scheme: heat.Implicit}}.solve, nil)
+// ours solves with implicit conduction.
+func ours(ctx context.Context, p heattest.Problem) (heattest.Answer, error) {
+	return adapter{settings: heat.Settings{Scheme: heat.Implicit}}.solve(ctx, p)
+}
+
+// implicitly says of what order our implicit scheme is: it documents a flux of
+// first order through walls whose temperature changes.
+func implicitly(c exact.Case) heattest.Orders {
+	o := heattest.Expected(c)
+	for side, kind := range [4]exact.Wall{c.Walls.Left, c.Walls.Right, c.Walls.Bottom, c.Walls.Top} {
+		for _, s := range []float64{0.1, 0.3} {
+			side := exact.Side(side)
+			if kind == exact.Isothermal && c.WallAt(side, s, c.Start) != c.WallAt(side, s, c.End) {
+				return heattest.Orders{Temperature: o.Temperature, Flux: 1}
+			}
+		}
+	}
+	return o
+}
+
+func TestOurImplicitSchemeConforms(t *testing.T) {
+	set := &heattest.Settings{Expect: implicitly}
+	if testing.Short() {
+		set.Cells = []int{12, 24}
+		set.Slack, set.Overshoot = 0.6, 0.1
+	}
+	r, err := heattest.Run(t.Context(), ours, set)
 	require.NoError(t, err)
 	t.Logf("\n%v", r)
-	for _, res := range r.Results {
-		t.Log(res)
-	}
 	require.NoError(t, r.Err())
+	require.Len(t, r.Results, len(exact.All()))
+	for _, res := range r.Results {
+		require.NoError(t, res.Skipped)
+		require.GreaterOrEqual(t, len(res.Checks), 6, res.Name)
+	}
+}
+
+// The explicit schemes have the full order of the flux, too.
+func TestOurExplicitSchemesConform(t *testing.T) {
+	if testing.Short() {
+		t.Skip("takes seconds")
+	}
+	solve := adapter{settings: heat.Settings{Scheme: heat.RungeKutta3}}.solve
+	for _, set := range []heattest.Settings{
+		{Cells: []int{8, 16, 32}, Cases: cases(t, "periodic surface", "half-space", "manufactured, mixed", "contact")},
+		{Cells: []int{16, 32, 64}, Cases: cases(t, "gaussian in rotation", "gaussian in shear")},
+	} {
+		r, err := heattest.Run(t.Context(), solve, &set)
+		require.NoError(t, err)
+		t.Logf("\n%v", r)
+		require.NoError(t, r.Err())
+	}
+}
+
+// The bounded scheme makes no new extrema at all.
+func TestOurBoundedSchemeKeepsTheMaximumPrinciple(t *testing.T) {
+	strict := heattest.Settings{Cells: []int{12, 24}, Slack: 1, Overshoot: 1e-12, Cases: cases(t, "gaussian in rotation", "gaussian in shear")}
+	bounded := adapter{settings: heat.Settings{Advection: heat.Bounded}}.solve
+	require.NoError(t, heattest.Check(t.Context(), bounded, &strict))
+	central := adapter{}.solve
+	require.ErrorContains(t, heattest.Check(t.Context(), central, &strict), "gaussian in rotation: maximum principle")
+}
+
+func TestOurSolverConformsOnStretchedGrids(t *testing.T) {
+	if testing.Short() {
+		t.Skip("takes seconds")
+	}
+	r, err := heattest.Run(t.Context(), ours, &heattest.Settings{Cells: []int{24, 48}, Stretch: 4, Slack: 0.5, Expect: implicitly,
+		Cases: cases(t, "half-space", "layers", "contact", "hot top", "throughflow", "manufactured, isothermal", "manufactured, periodic")})
+	require.NoError(t, err)
+	t.Logf("\n%v", r)
+	require.NoError(t, r.Err())
+}
+
+// cases picks exact solutions by name.
+func cases(t testing.TB, names ...string) []exact.Case {
+	t.Helper()
+	var list []exact.Case
+	for _, name := range names {
+		n := len(list)
+		for _, c := range exact.All() {
+			if c.Name == name {
+				list = append(list, c)
+			}
+		}
+		require.Len(t, list, n+1, name)
+	}
+	return list
 }

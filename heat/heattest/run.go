@@ -85,7 +85,7 @@ func (st *study) run(ctx context.Context) Result {
 		r.Grids = append(r.Grids, g.String())
 	}
 	r.Convergence = st.convergence(runs)
-	checks, err := st.properties(ctx, runs[0])
+	checks, err := st.properties(ctx, runs[0], runs[len(runs)-1])
 	if err != nil {
 		return failed(err)
 	}

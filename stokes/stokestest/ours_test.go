@@ -20,7 +20,7 @@ func ours(ctx context.Context, p stokestest.Problem) (stokestest.Answer, error) 
 // spoil the answer afterwards: the tests' bugs.
 type adapter struct {
 	settings stokes.Settings
-	plant    func(sv *staggered.Grid, eta *staggered.Scalar, force *staggered.Vector)
+	plant    func(eta *staggered.Scalar, force *staggered.Vector)
 	spoil    func(flow *staggered.Flow)
 }
 
@@ -41,7 +41,7 @@ func (a adapter) solve(ctx context.Context, p stokestest.Problem) (stokestest.An
 	eta.Fill(p.Viscosity)
 	force.Fill(p.ForceX, p.ForceZ)
 	if a.plant != nil {
-		a.plant(g, eta, force)
+		a.plant(eta, force)
 	}
 	if _, err := sv.Solve(ctx, flow, eta, force); err != nil {
 		return stokestest.Answer{}, err
@@ -94,11 +94,56 @@ func walls(p stokestest.Problem) stokes.Walls {
 }
 
 func TestOurSolverConforms(t *testing.T) {
-	r, err := stokestest.Run(t.Context(), ours, nil)
+	set := &stokestest.Settings{}
+	if testing.Short() {
+		set.Cells = []int{16, 32}
+		set.Slack = 0.6
+	}
+	r, err := stokestest.Run(t.Context(), ours, set)
 	require.NoError(t, err)
 	t.Logf("\n%v", r)
-	for _, res := range r.Results {
-		t.Log(res)
-	}
 	require.NoError(t, r.Err())
+	require.Len(t, r.Results, len(exact.All()))
+	for _, res := range r.Results {
+		require.NoError(t, res.Skipped)
+		require.GreaterOrEqual(t, len(res.Checks), 4, res.Name)
+	}
+}
+
+// Where no wall drags and the viscosity is smooth, stress has the full order.
+func TestOurStressIsSecondOrderBetweenFreeSlipWalls(t *testing.T) {
+	err := stokestest.Check(t.Context(), ours, &stokestest.Settings{
+		Cases:  cases(t, "box mode", "exponential viscosity", "manufactured, free slip"),
+		Cells:  []int{24, 48},
+		Slack:  0.1,
+		Expect: func(exact.Case) stokestest.Orders { return stokestest.Orders{Velocity: 2, Pressure: 2, Stress: 2} },
+	})
+	require.NoError(t, err)
+}
+
+func TestOurSolverConformsOnStretchedGrids(t *testing.T) {
+	if testing.Short() {
+		t.Skip("takes seconds")
+	}
+	r, err := stokestest.Run(t.Context(), ours, &stokestest.Settings{Cells: []int{24, 48}, Stretch: 4, Slack: 0.4,
+		Cases: cases(t, "box mode", "columns", "layers", "exponential viscosity between plates", "spreading plates", "manufactured, no slip", "manufactured, periodic")})
+	require.NoError(t, err)
+	t.Logf("\n%v", r)
+	require.NoError(t, r.Err())
+}
+
+// cases picks exact solutions by name.
+func cases(t testing.TB, names ...string) []exact.Case {
+	t.Helper()
+	var list []exact.Case
+	for _, name := range names {
+		n := len(list)
+		for _, c := range exact.All() {
+			if c.Name == name {
+				list = append(list, c)
+			}
+		}
+		require.Len(t, list, n+1, name)
+	}
+	return list
 }
