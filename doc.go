@@ -19,6 +19,8 @@
 //	viscosity laws                         [example.org/overturn/stokes/rheology]
 //	exact solutions to test codes with     [example.org/overturn/stokes/exact]
 //	                                       [example.org/overturn/heat/exact]
+//	a test kit for your own solver         [example.org/overturn/stokes/stokestest]
+//	                                       [example.org/overturn/heat/heattest]
 //
 // # Conventions
 //
