@@ -26,10 +26,10 @@ type Settings struct {
 
 	// CornerMean is how the viscosity at the corners of cells, where shear
 	// stress lives, follows from that of the cells around. Default
-	// [Geometric]. On sharp jumps it decides the size of the error, which is of
-	// first order whatever the mean: [Harmonic] is the more accurate where
-	// bodies are stiffer than their surroundings, [Arithmetic] where they are
-	// weaker.
+	// [Geometric]. On sharp jumps it decides the size of the error. Where jumps
+	// lie on grid lines [Harmonic] is second order accurate, the others first;
+	// where they do not, all are first order, and Harmonic is the more accurate
+	// for bodies stiffer than their surroundings, [Arithmetic] for weaker ones.
 	CornerMean Mean
 
 	// Workers is the number of goroutines. It changes the time a solve
