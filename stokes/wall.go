@@ -234,3 +234,18 @@ func (w Walls) AtRest() Walls {
 	still := func(w Wall) Wall { return Wall{kind: w.kind} }
 	return Walls{Left: still(w.Left), Right: still(w.Right), Bottom: still(w.Bottom), Top: still(w.Top)}
 }
+
+// Sticks reports whether fluid sticks to the wall.
+func (w Wall) Sticks() bool { return w.kind == noSlip }
+
+// Velocity returns the velocity of a no-slip wall along itself at s, 0 where it
+// was not made to move.
+func (w Wall) Velocity(s float64) float64 {
+	if w.tangential == nil {
+		return 0
+	}
+	return w.tangential(s)
+}
+
+// Crossed reports whether fluid was made to cross the wall.
+func (w Wall) Crossed() bool { return w.normal != nil }

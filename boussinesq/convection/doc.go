@@ -13,7 +13,8 @@
 //
 // [Steady] finds a steady state by Newton's method without stepping in time,
 // and [Refine] does so on a sequence of grids and returns every diagnostic with
-// its numerical uncertainty.
+// its numerical uncertainty. [Diagnose] takes the diagnostics of fields from
+// elsewhere.
 //
 // # Conventions
 //
@@ -42,7 +43,8 @@
 //
 // # Limits
 //
-// Infinite Prandtl number, constant conductivity and heat capacity, no viscous
-// or adiabatic heating: the Boussinesq approximation. [boussinesq.Layer.Validity]
+// Infinite Prandtl number, uniform and constant conductivity, heat capacity and
+// heating, walls that do not change in time, no viscous or adiabatic heating:
+// the Boussinesq approximation. [boussinesq.Layer.Validity]
 // says what that leaves out. Two dimensions.
 package convection

@@ -69,8 +69,8 @@ func newModel(p Problem, s *Settings) (*Model, error) {
 // Time returns the time reached.
 func (m *Model) Time() float64 { return m.time }
 
-// Step returns the number of steps taken.
-func (m *Model) Step() int { return m.steps }
+// StepsTaken returns the number of time steps since time zero.
+func (m *Model) StepsTaken() int { return m.steps }
 
 // Temperature returns the temperature, which the model goes on using: change
 // it through SetTemperature or Perturb.

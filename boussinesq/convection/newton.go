@@ -43,7 +43,6 @@ type newton struct {
 	step, y, trial *staggered.Scalar
 	before         *staggered.Scalar // R at temperature while a trial is made
 	trialFlow      *staggered.Flow
-	ctx            context.Context // of the solve that runs
 }
 
 // Tolerances inside a Newton step: it gains a factor of a hundred, so that the
@@ -101,9 +100,9 @@ const (
 // solve improves a temperature in place, by implicit steps in time first if
 // the guess is far from steady.
 func (n *newton) solve(ctx context.Context, temperature *staggered.Scalar, far bool) (*Solution, error) {
-	n.ctx, n.temperature = ctx, temperature
+	n.temperature = temperature
 	sol := &Solution{Temperature: temperature, Flow: n.flow}
-	if err := n.evaluate(temperature, n.flow); err != nil {
+	if err := n.evaluate(ctx, temperature, n.flow); err != nil {
 		return nil, err
 	}
 	sol.Residual = n.residual(n.rate)
@@ -122,8 +121,8 @@ func (n *newton) solve(ctx context.Context, temperature *staggered.Scalar, far b
 		var products int
 		var err error
 		if shift > 0 {
-			products, shift, err = n.implicitStep(shift)
-		} else if products, err = n.improve(sol.Residual); errors.Is(err, ErrNotSteady) && detours < maxDetours {
+			products, shift, err = n.implicitStep(ctx, shift)
+		} else if products, err = n.improve(ctx, sol.Residual); errors.Is(err, ErrNotSteady) && detours < maxDetours {
 			// The state is further off than it seemed: back to steps in time.
 			shift, err = n.firstShift(sol.Residual), nil
 			detours++
@@ -146,9 +145,9 @@ func (n *newton) solve(ctx context.Context, temperature *staggered.Scalar, far b
 
 // implicitStep takes one linearly implicit Euler step over 1/shift and returns
 // the shift for the next, zero when Newton's method can take over.
-func (n *newton) implicitStep(shift float64) (products int, next float64, err error) {
+func (n *newton) implicitStep(ctx context.Context, shift float64) (products int, next float64, err error) {
 	for range 20 {
-		count, err := n.correction(shift, 5*forcing)
+		count, err := n.correction(ctx, shift, 5*forcing)
 		products += count
 		if err != nil {
 			return products, shift, err
@@ -156,7 +155,7 @@ func (n *newton) implicitStep(shift float64) (products int, next float64, err er
 		size := n.step.RMS() / n.extent()
 		if size <= tooLarge {
 			before := n.flow.RMS()
-			accepted, err := n.try(1, math.Inf(1))
+			accepted, err := n.try(ctx, 1, math.Inf(1))
 			if err != nil {
 				return products, shift, err
 			}
@@ -191,8 +190,8 @@ func (n *newton) nextShift(shift, size, before float64) float64 {
 }
 
 // evaluate solves for the flow of a temperature and stores R in n.rate.
-func (n *newton) evaluate(t *staggered.Scalar, flow *staggered.Flow) error {
-	if _, err := n.sys.solveFlow(n.ctx, t, flow); err != nil {
+func (n *newton) evaluate(ctx context.Context, t *staggered.Scalar, flow *staggered.Flow) error {
+	if _, err := n.sys.solveFlow(ctx, t, flow); err != nil {
 		return err
 	}
 	if err := n.sys.heat.RateTo(n.rate, t, flow); err != nil {
@@ -217,13 +216,13 @@ func (n *newton) extent() float64 {
 
 // improve takes one Newton step, shortened where the residual would not fall,
 // and returns the number of products it cost.
-func (n *newton) improve(residual float64) (int, error) {
-	products, err := n.correction(0, forcing)
+func (n *newton) improve(ctx context.Context, residual float64) (int, error) {
+	products, err := n.correction(ctx, 0, forcing)
 	if err != nil {
 		return products, err
 	}
 	for share := 1.0; share > 1e-3; share /= 2 {
-		if accepted, err := n.try(share, (1-0.1*share)*residual); accepted || err != nil {
+		if accepted, err := n.try(ctx, share, (1-0.1*share)*residual); accepted || err != nil {
 			return products, err
 		}
 	}
@@ -232,13 +231,14 @@ func (n *newton) improve(residual float64) (int, error) {
 
 // correction stores in n.step the solution of the linearised system with C·shift
 // added to A.
-func (n *newton) correction(shift, tolerance float64) (int, error) {
+func (n *newton) correction(ctx context.Context, shift, tolerance float64) (int, error) {
 	if err := n.linearise(shift); err != nil {
 		return 0, fmt.Errorf("convection: %w", err)
 	}
-	products, err := n.krylov.Solve(n.ctx, n.y.Values, n.rate.Values, n.product, tolerance)
+	product := func(dst, y []float64) error { return n.product(ctx, dst, y) }
+	products, err := n.krylov.Solve(ctx, n.y.Values, n.rate.Values, product, tolerance)
 	if err != nil && !errors.Is(err, gmres.ErrNotConverged) {
-		return products, err
+		return products, fmt.Errorf("convection: %w", err)
 	}
 	if err := n.sys.heat.SolveTo(n.step, n.y); err != nil {
 		return products, fmt.Errorf("convection: %w", err)
@@ -248,16 +248,16 @@ func (n *newton) correction(shift, tolerance float64) (int, error) {
 
 // try moves a share of n.step and keeps the new state if its residual is at
 // most bound.
-func (n *newton) try(share, bound float64) (bool, error) {
+func (n *newton) try(ctx context.Context, share, bound float64) (bool, error) {
 	floats.AddScaledTo(n.trial.Values, n.temperature.Values, share, n.step.Values)
 	if err := n.trialFlow.CopyFrom(n.flow); err != nil {
 		return false, err
 	}
 	copy(n.before.Values, n.rate.Values)
-	if err := n.evaluate(n.trial, n.trialFlow); err != nil {
+	if err := n.evaluate(ctx, n.trial, n.trialFlow); err != nil {
 		copy(n.rate.Values, n.before.Values)
 		// Without a flow the step went too far: temperatures beyond sense.
-		return false, n.ctx.Err()
+		return false, ctx.Err()
 	}
 	if !(n.residual(n.rate) <= bound) {
 		copy(n.rate.Values, n.before.Values)
@@ -281,12 +281,12 @@ func (n *newton) linearise(shift float64) error {
 }
 
 // product stores y + B v′(A⁻¹y) in dst.
-func (n *newton) product(dst, y []float64) error {
+func (n *newton) product(ctx context.Context, dst, y []float64) error {
 	copy(n.step.Values, y)
 	if err := n.sys.heat.SolveTo(n.step, n.step); err != nil {
 		return err
 	}
-	if err := n.respond(n.step); err != nil {
+	if err := n.respond(ctx, n.step); err != nil {
 		return err
 	}
 	if err := n.sys.heat.RateTo(n.trial, n.temperature, n.response); err != nil {
@@ -299,14 +299,14 @@ func (n *newton) product(dst, y []float64) error {
 }
 
 // respond finds the change of the flow under a change of the temperature.
-func (n *newton) respond(d *staggered.Scalar) error {
+func (n *newton) respond(ctx context.Context, d *staggered.Scalar) error {
 	n.sys.buoyancy.FillVertical(d, n.sys.Rayleigh)
 	if n.stress != nil {
 		if err := n.stress.addTo(n.sys.buoyancy, d); err != nil {
 			return err
 		}
 	}
-	_, err := n.linear.Solve(n.ctx, n.response, n.viscosity(), n.sys.buoyancy)
+	_, err := n.linear.Solve(ctx, n.response, n.viscosity(), n.sys.buoyancy)
 	return err
 }
 
@@ -316,67 +316,4 @@ func (n *newton) viscosity() *staggered.Scalar {
 		return nil
 	}
 	return n.stress.viscosity
-}
-
-// A stressResponse is the force that a flow feels when the viscosity changes
-// with the temperature, ∇·(2 δη ε), by a central difference in the direction of
-// the change of temperature.
-type stressResponse struct {
-	sys         *system
-	temperature *staggered.Scalar
-	flow        *staggered.Flow // velocity alone: pressure would only cancel
-	viscosity   *staggered.Scalar
-
-	warmer, eta  *staggered.Scalar
-	above, below *staggered.Vector
-}
-
-// differenceStep is the largest change of temperature in the difference, in
-// temperature ranges: its square is the relative error.
-const differenceStep = 1e-4
-
-func newStressResponse(sys *system) *stressResponse {
-	g := sys.Grid
-	return &stressResponse{
-		sys: sys, viscosity: staggered.NewScalar(g),
-		warmer: staggered.NewScalar(g), eta: staggered.NewScalar(g),
-		above: staggered.NewVector(g), below: staggered.NewVector(g),
-	}
-}
-
-func (r *stressResponse) prepare(t *staggered.Scalar, flow *staggered.Flow) {
-	r.temperature = t
-	r.flow = &staggered.Flow{Grid: flow.Grid, VX: flow.VX, VZ: flow.VZ, P: make([]float64, len(flow.P))}
-	r.sys.viscosityTo(r.viscosity, t)
-}
-
-// addTo adds the force for the change d of the temperature.
-func (r *stressResponse) addTo(force *staggered.Vector, d *staggered.Scalar) error {
-	largest := floats.Norm(d.Values, math.Inf(1))
-	if largest == 0 {
-		return nil
-	}
-	lowest, highest := r.temperature.Extrema()
-	h := differenceStep * max(highest.Value-lowest.Value, math.SmallestNonzeroFloat64) / largest
-	if err := r.apply(r.above, h, d); err != nil {
-		return err
-	}
-	if err := r.apply(r.below, -h, d); err != nil {
-		return err
-	}
-	scale := 0.5 / h
-	for j := range force.X {
-		force.X[j] += scale * (r.above.X[j] - r.below.X[j])
-	}
-	for j := range force.Z {
-		force.Z[j] += scale * (r.above.Z[j] - r.below.Z[j])
-	}
-	return nil
-}
-
-// apply stores the viscous force at the temperature plus h d.
-func (r *stressResponse) apply(dst *staggered.Vector, h float64, d *staggered.Scalar) error {
-	floats.AddScaledTo(r.warmer.Values, r.temperature.Values, h, d.Values)
-	r.sys.viscosityTo(r.eta, r.warmer)
-	return r.sys.stokes.ApplyTo(dst, r.flow, r.eta)
 }

@@ -33,23 +33,22 @@ func TestRejectedTrialsLeaveNoTrace(t *testing.T) {
 	require.NoError(t, err)
 	n, err := newNewton(sys, settings)
 	require.NoError(t, err)
-	n.ctx = context.Background()
-	n.temperature, err = sys.start(n.ctx)
+	n.temperature, err = sys.start(context.Background())
 	require.NoError(t, err)
-	require.NoError(t, n.evaluate(n.temperature, n.flow))
+	require.NoError(t, n.evaluate(context.Background(), n.temperature, n.flow))
 	temperature, rate, flow := slices.Clone(n.temperature.Values), slices.Clone(n.rate.Values), n.flow.Clone()
 
 	for change, bound := range map[float64]float64{0.1: 0, 5: math.Inf(1)} {
 		n.step.SetAll(change)
 		n.step.Values[3] = -change
-		accepted, err := n.try(1, bound)
+		accepted, err := n.try(context.Background(), 1, bound)
 		require.NoError(t, err)
 		assert.False(t, accepted)
 		assert.Equal(t, temperature, n.temperature.Values)
 		assert.Equal(t, rate, n.rate.Values)
 		assert.Equal(t, flow.VX, n.flow.VX)
 	}
-	accepted, err := n.try(0.01, math.Inf(1))
+	accepted, err := n.try(context.Background(), 0.01, math.Inf(1))
 	require.NoError(t, err)
 	assert.True(t, accepted)
 	assert.InDelta(t, temperature[0]+0.05, n.temperature.Values[0], 0.1)

@@ -253,3 +253,21 @@ func TestSteadyFromAGuess(t *testing.T) {
 	assert.InDelta(t, 1, rest.NuTop, 1e-6)
 	assert.Less(t, rest.RMSVelocity, 1e-4)
 }
+
+// The search hands over from steps in time to Newton's method: a cold start
+// takes few steps on the coarse grid, and a handful on every finer one.
+func TestSteadyTakesFewSteps(t *testing.T) {
+	steps := map[int]int{}
+	for _, c := range steadyCases() {
+		if c.name != "1b" {
+			continue
+		}
+		_, err := convection.Steady(context.Background(), c.on(t, 96), &convection.SteadySettings{
+			Monitor: func(p convection.SteadyProgress) { steps[p.Grid.NX()]++ },
+		})
+		require.NoError(t, err)
+	}
+	require.Len(t, steps, 2)
+	assert.LessOrEqual(t, steps[48], 45)
+	assert.LessOrEqual(t, steps[96], 5)
+}

@@ -16,6 +16,10 @@ type Diagnostics struct {
 	// and top. Infinite or NaN where these two are equal, to rounding.
 	NuTop, NuBottom float64
 
+	// HeatFlowTop and HeatFlowBottom are the mean heat fluxes conducted upward
+	// through the walls, per area and time.
+	HeatFlowTop, HeatFlowBottom float64
+
 	// RMSVelocity is the root mean square speed over the box, SurfaceVelocity
 	// that along the top wall.
 	RMSVelocity, SurfaceVelocity float64
@@ -39,6 +43,8 @@ func (d Diagnostics) All() iter.Seq2[string, float64] {
 	return func(yield func(string, float64) bool) {
 		_ = yield("NuTop", d.NuTop) &&
 			yield("NuBottom", d.NuBottom) &&
+			yield("HeatFlowTop", d.HeatFlowTop) &&
+			yield("HeatFlowBottom", d.HeatFlowBottom) &&
 			yield("RMSVelocity", d.RMSVelocity) &&
 			yield("SurfaceVelocity", d.SurfaceVelocity) &&
 			yield("MeanTemperature", d.MeanTemperature) &&
@@ -52,7 +58,8 @@ func (d Diagnostics) All() iter.Seq2[string, float64] {
 }
 
 // WorkError returns the relative difference between dissipation and the work
-// of buoyancy, 0 where nothing moves.
+// of buoyancy, 0 where nothing moves. It measures an error only between walls
+// that do no work: at rest along no slip, uncrossed.
 func (d Diagnostics) WorkError() float64 {
 	size := max(math.Abs(d.Dissipation), math.Abs(d.BuoyancyWork))
 	if size == 0 {

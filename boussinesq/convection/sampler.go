@@ -79,7 +79,7 @@ func (s *sampler) diagnose(t *staggered.Scalar, flow *staggered.Flow) (Diagnosti
 // bottom and top is rounding: they are equal.
 const dropRounding = 1e-12
 
-// heatFlow sets the Nusselt numbers.
+// heatFlow sets heat flows and Nusselt numbers.
 func (s *sampler) heatFlow(d *Diagnostics, t *staggered.Scalar) error {
 	nz := s.sys.Grid.NZ()
 	into, warm, err := s.wall(staggered.Bottom, s.bottom, t, 0, min(1, nz-1))
@@ -95,6 +95,7 @@ func (s *sampler) heatFlow(d *Diagnostics, t *staggered.Scalar) error {
 		drop = 0
 	}
 	conducted := s.sys.Conductivity * drop / s.sys.Grid.Height()
+	d.HeatFlowBottom, d.HeatFlowTop = into, -out
 	d.NuBottom, d.NuTop = into/conducted, -out/conducted
 	return nil
 }
@@ -122,10 +123,35 @@ func (s *sampler) wall(side staggered.Side, w wallTemperature, t *staggered.Scal
 
 // surfaceVelocity integrates over the nodes of the top by the trapezoidal rule.
 func (s *sampler) surfaceVelocity(flow *staggered.Flow) float64 {
-	v := flow.TangentialTo(s.along, staggered.Top)
+	v := s.alongTop(flow)
 	sum := 0.0
 	for i, dx := range s.sys.Grid.DX() {
 		sum += 0.5 * dx * (v[i]*v[i] + v[i+1]*v[i+1])
 	}
 	return math.Sqrt(sum / s.sys.Grid.Width())
+}
+
+// alongTop returns the velocity at the nodes of the top: the wall's own where
+// fluid sticks to it, else, below a wall without shear stress, that of the
+// parabola with its vertex on the wall through the two nearest rows.
+func (s *sampler) alongTop(flow *staggered.Flow) []float64 {
+	g, top := s.sys.Grid, s.sys.Walls.Top
+	nx, nz := g.Cells()
+	if top.Sticks() {
+		for i, x := range g.XNodes() {
+			s.along[i] = top.Velocity(x)
+		}
+		return s.along
+	}
+	if nz < 2 || top.Crossed() {
+		return flow.TangentialTo(s.along, staggered.Top)
+	}
+	dz := g.DZ()
+	a, b := 0.5*dz[nz-1], dz[nz-1]+0.5*dz[nz-2]
+	near, next := b*b/(b*b-a*a), -a*a/(b*b-a*a)
+	upper, lower := flow.VX[(nz-1)*(nx+1):][:nx+1], flow.VX[(nz-2)*(nx+1):][:nx+1]
+	for i := range s.along {
+		s.along[i] = near*upper[i] + next*lower[i]
+	}
+	return s.along
 }

@@ -129,6 +129,9 @@ func (s *SteadySettings) withDefaults() (SteadySettings, error) {
 // states, Problem.Initial decides: the damping of long steps favours a state of
 // as many rolls as it has. A layer that does not convect is found at rest.
 // Whether the state is stable in time is not asked.
+//
+// With an error of the search, such as [ErrNotSteady], comes the best solution
+// met, on the grid that the search had reached; with one of the input, nil.
 func Steady(ctx context.Context, p Problem, s *SteadySettings) (*Solution, error) {
 	c, err := s.withDefaults()
 	if err != nil {
@@ -226,6 +229,10 @@ func steadyOn(ctx context.Context, p Problem, s SteadySettings, guess *staggered
 	}
 	if err != nil {
 		return nil, err
+	}
+	if err := sys.heat.Factor(nil); err != nil {
+		// No wall determines the temperature: there is no one steady state.
+		return nil, fmt.Errorf("convection: %w", err)
 	}
 	n, err := newNewton(sys, s)
 	if err != nil {

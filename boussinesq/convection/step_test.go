@@ -70,7 +70,7 @@ func TestStepsAreSecondOrderInTime(t *testing.T) {
 				EndTime: end, MaxStep: end / float64(steps) * (1 + 1e-9), FlowError: 1e9, Courant: 1,
 				Heat: &heat.Settings{Scheme: tt.scheme}, Stokes: &stokes.Settings{Tolerance: 1e-11},
 			})
-			require.Equal(t, steps, m.Step())
+			require.Equal(t, steps, m.StepsTaken())
 			return m.Temperature()
 		}
 		exact := at(8 * tt.steps)
@@ -211,7 +211,7 @@ func TestResumedRunContinuesBitForBit(t *testing.T) {
 	require.NoError(t, half.Save(&file))
 	resumed, err := Resume(&file, p, &Settings{MaxSteps: 17})
 	require.NoError(t, err)
-	assert.Equal(t, 13, resumed.Step())
+	assert.Equal(t, 13, resumed.StepsTaken())
 	_, err = resumed.Run(context.Background())
 	require.NoError(t, err)
 	assert.Equal(t, whole.Time(), resumed.Time())
@@ -303,7 +303,7 @@ func TestCancelledRunKeepsItsLastStep(t *testing.T) {
 	}
 	require.ErrorIs(t, failure, context.Canceled)
 	assert.Equal(t, 5, last.Step)
-	assert.Equal(t, 5, m.Step())
+	assert.Equal(t, 5, m.StepsTaken())
 	cancel()
 	whole := run(t, variable(square(t, 12)), &Settings{MaxSteps: 5})
 	assert.Equal(t, whole.Temperature().Values, m.Temperature().Values)
@@ -358,7 +358,7 @@ func TestDefaultsAreTheWrittenOnes(t *testing.T) {
 func TestImplicitStepsAtRestStayFinite(t *testing.T) {
 	settings := &Settings{MaxSteps: 200, Heat: &heat.Settings{Scheme: heat.Implicit}}
 	m := run(t, Problem{Grid: square(t, 8)}, settings)
-	assert.Equal(t, 200, m.Step())
+	assert.Equal(t, 200, m.StepsTaken())
 	assert.LessOrEqual(t, m.last, 1.0, "no step is longer than the diffusion time")
 	s, err := m.sample(Running)
 	require.NoError(t, err)

@@ -58,6 +58,10 @@ var ithyra = boussinesq.Uncertain{
 func main() {
 	out := flag.String("out", "examples/iceshell/out", "folder for the picture and the field")
 	flag.Parse()
+	if flag.NArg() > 0 {
+		fmt.Fprintf(os.Stderr, "iceshell: %q is no flag, want -out\n", flag.Arg(0))
+		os.Exit(2)
+	}
 	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt)
 	defer stop()
 	if err := run(ctx, *out); err != nil {
@@ -70,11 +74,15 @@ func run(ctx context.Context, out string) error {
 	if err := beforehand(); err != nil {
 		return err
 	}
-	model, mean, err := simulate(ctx)
+	model, last, err := simulate(ctx)
 	if err != nil {
 		return err
 	}
-	if err := report(mean); err != nil {
+	study, err := converge(ctx)
+	if err != nil {
+		return err
+	}
+	if err := report(last, study); err != nil {
 		return err
 	}
 	return save(out, model)
@@ -124,39 +132,55 @@ func thermalExponent() (float64, error) {
 	return ithyra.Layer.FrankKamenetskii(activationEnergy, ithyra.Layer.Material.ReferenceTemperature)
 }
 
-// simulate runs the best values until heat flow and speed have settled, and
-// returns their means over the second half of the run.
-func simulate(ctx context.Context) (*convection.Model, averages, error) {
-	g, err := staggered.Uniform(96, 48, 2, 1)
-	if err != nil {
-		return nil, averages{}, err
-	}
+// layer returns the scaled problem of the best values on a grid.
+func layer(g *staggered.Grid) (convection.Problem, error) {
 	p, err := convection.FromLayer(ithyra.Layer, g)
 	if err != nil {
-		return nil, averages{}, err
+		return p, err
 	}
 	gamma, err := thermalExponent()
-	if err != nil {
-		return nil, averages{}, err
-	}
 	p.Viscosity = rheology.FrankKamenetskii{ThermalExponent: gamma, ReferenceTemperature: 0.5}
-	const end = 0.12
+	return p, err
+}
+
+// simulate runs the layer from a small disturbance until convection is fully
+// grown and nearly steady.
+func simulate(ctx context.Context) (*convection.Model, convection.Sample, error) {
+	var last convection.Sample
+	g, err := staggered.Uniform(96, 48, 2, 1)
+	if err != nil {
+		return nil, last, err
+	}
+	p, err := layer(g)
+	if err != nil {
+		return nil, last, err
+	}
+	const end = 0.1
 	m, err := convection.New(p, &convection.Settings{
 		EndTime: end, Courant: 0.9, Every: 10, Heat: &heat.Settings{Advection: heat.Bounded},
 	})
 	if err != nil {
-		return nil, averages{}, err
+		return nil, last, err
 	}
-	var mean averages
 	watch := progress()
-	for s, err := range m.Steps(ctx) {
+	for last, err = range m.Steps(ctx) {
 		if err != nil {
-			return nil, mean, err
+			return nil, last, err
 		}
-		if s.Time > end/2 {
-			mean.add(s)
-		}
-		watch(s.Time / end)
+		watch(last.Time / end)
 	}
-	return m, mean, nil
+	return m, last, nil
+}
+
+// converge finds the steady state that the run tends to on three grids.
+func converge(ctx context.Context) (*convection.Study, error) {
+	g, err := staggered.Graded(192, 96, 2, 1, staggered.Grading{Left: 6, Right: 6, Bottom: 6, Top: 6})
+	if err != nil {
+		return nil, err
+	}
+	p, err := layer(g)
+	if err != nil {
+		return nil, err
+	}
+	return convection.Refine(ctx, p, 3, nil)
 }

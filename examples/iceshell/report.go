@@ -5,7 +5,6 @@ import (
 	"fmt"
 	"image/png"
 	"io"
-	"math"
 	"os"
 	"path/filepath"
 
@@ -15,46 +14,34 @@ import (
 	"example.org/overturn/units"
 )
 
-// averages collects means over time.
-type averages struct {
-	count              float64
-	nu, speed, surface float64
-	temperature        float64
-	imbalance, budget  float64
-	workError          float64
-}
-
-func (a *averages) add(s convection.Sample) {
-	a.count++
-	step := func(mean *float64, v float64) { *mean += (v - *mean) / a.count }
-	step(&a.nu, s.NuTop)
-	step(&a.speed, s.RMSVelocity)
-	step(&a.surface, s.SurfaceVelocity)
-	step(&a.temperature, s.MeanTemperature)
-	step(&a.imbalance, s.NuBottom-s.NuTop)
-	a.budget = max(a.budget, s.HeatBudgetError)
-	a.workError = max(a.workError, s.WorkError())
-}
-
-// report prints the scaled results beside the dimensional ones.
-func report(mean averages) error {
+// report prints the run and the steady state it tends to, scaled and
+// dimensional, with the numerical uncertainty of the latter. That of the
+// material is in the range of the Rayleigh number.
+func report(last convection.Sample, study *convection.Study) error {
 	s, err := ithyra.Layer.Scales()
 	if err != nil {
 		return err
 	}
-	kelvin := float64(s.Temperature(mean.temperature))
-	row := func(name string, scaled, value float64, unit string) {
-		fmt.Printf("  %-28s %10.4g %10.3g %s\n", name, scaled, value, unit)
+	steady := func(name string) convection.Estimate {
+		e, _ := study.Get(name)
+		return e
 	}
-	fmt.Printf("\n  %-28s %10s %10s\n", "mean over the second half", "scaled", "of Ithyra")
-	row("Nusselt number, heat flux", mean.nu, s.HeatFlux(mean.nu).In(units.MilliwattPerSquareMetre), "mW/m²")
-	row("rms speed", mean.speed, s.Velocity(mean.speed).In(units.MillimetrePerYear), "mm/yr")
-	row("rms speed along the top", mean.surface, s.Velocity(mean.surface).In(units.MillimetrePerYear), "mm/yr")
-	row("mean temperature", mean.temperature, kelvin, "K")
-	row("time to cross the layer", 1/mean.speed, s.Time(1/mean.speed).In(units.Megayear), "Myr")
-	row("time to diffuse through it", 1, s.Time(1).In(units.Megayear), "Myr")
-	fmt.Printf("\nChecks: the heat budget of every step closes to %.0e, buoyancy work and dissipation differ by %.0e,\n"+
-		"heat flows in and out differ by %.1f %% of the mean.\n", mean.budget, mean.workError, 100*math.Abs(mean.imbalance)/mean.nu)
+	flux := func(v float64) float64 { return s.HeatFlux(v).In(units.MilliwattPerSquareMetre) }
+	speed := func(v float64) float64 { return s.Velocity(v).In(units.MillimetrePerYear) }
+	kelvin := func(v float64) float64 { return float64(s.TemperatureDifference(v)) }
+	fmt.Printf("\n  %-24s %10s %20s %20s\n", "best values", "the run", "steady state", "of Ithyra")
+	row := func(name string, run float64, e convection.Estimate, in func(float64) float64, zero float64, unit string) {
+		fmt.Printf("  %-24s %10.4g %12.5g ± %-5.1g %10.4g ± %-5.1g %s\n",
+			name, run, e.Value, e.Uncertainty, zero+in(e.Value), in(e.Uncertainty), unit)
+	}
+	row("Nusselt number, heat flux", last.NuTop, steady("NuTop"), flux, 0, "mW/m²")
+	row("rms speed", last.RMSVelocity, steady("RMSVelocity"), speed, 0, "mm/yr")
+	row("rms speed along the top", last.SurfaceVelocity, steady("SurfaceVelocity"), speed, 0, "mm/yr")
+	row("mean temperature", last.MeanTemperature, steady("MeanTemperature"), kelvin, float64(ithyra.Layer.Top), "K")
+	fmt.Printf("\n  the run lasted %.2f Myr; fluid crosses the layer in %.3f Myr, heat alone in %.1f Myr\n",
+		s.Time(last.Time).In(units.Megayear), s.Time(1/last.RMSVelocity).In(units.Megayear), s.Time(1).In(units.Megayear))
+	fmt.Printf("  its last step closes the heat budget to %.0e; buoyancy work and dissipation differ by %.0e\n",
+		last.HeatBudgetError, last.WorkError())
 	return nil
 }
 

@@ -32,6 +32,10 @@ func main() {
 	asJSON := flag.Bool("json", false, "print one JSON object a line")
 	cells := flag.Int("cells", 384, "cells along each side on the finest of three grids, a multiple of 4")
 	flag.Parse()
+	if flag.NArg() > 0 {
+		fmt.Fprintf(os.Stderr, "verify: %q is no flag, want -case, -json or -cells\n", flag.Arg(0))
+		os.Exit(2)
+	}
 	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt)
 	defer stop()
 	if err := verify(ctx, os.Stdout, *only, *asJSON, *cells); err != nil {
@@ -51,11 +55,11 @@ func verify(ctx context.Context, w io.Writer, only string, asJSON bool, cells in
 		if err != nil {
 			return fmt.Errorf("case %s: %w", b.name, err)
 		}
-		print := table
+		write := table
 		if asJSON {
-			print = lines
+			write = lines
 		}
-		if err := print(w, b, study); err != nil {
+		if err := write(w, b, study); err != nil {
 			return err
 		}
 	}

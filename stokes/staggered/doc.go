@@ -33,6 +33,11 @@
 // are plain float64 numbers in any one consistent set of units. On a box that
 // is periodic in x the last column of VX repeats the first.
 //
+// Methods that fill a destination or combine two fields want them on grids of
+// as many columns and rows, as indexing a slice wants an index in range: they
+// return no error and may panic otherwise. Fields that come from outside are
+// checked once, by the Wrap functions.
+//
 // # Accuracy
 //
 // Means, integrals, interpolation and extrapolation to the walls are second

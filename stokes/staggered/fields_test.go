@@ -114,6 +114,10 @@ func TestWrappedFieldsShareMemory(t *testing.T) {
 	assert.EqualError(t, err, "staggered: p holds 6 numbers, want 4 for 2x2 cells")
 	_, err = staggered.WrapFlow(g, x, p, p)
 	assert.Error(t, err)
+	_, err = staggered.WrapScalar(nil, values)
+	assert.EqualError(t, err, "staggered: values: grid is nil, want a grid")
+	_, err = staggered.WrapFlow(nil, x, z, p)
+	assert.ErrorContains(t, err, "grid is nil")
 }
 
 func TestCopiesAreIndependent(t *testing.T) {
@@ -125,6 +129,7 @@ func TestCopiesAreIndependent(t *testing.T) {
 	require.NoError(t, c.CopyFrom(s))
 	assert.Equal(t, 2.0, c.Values[8])
 	assert.Error(t, c.CopyFrom(staggered.NewScalar(graded(t, 3, 4))))
+	assert.Error(t, c.CopyFrom(staggered.NewScalar(graded(t, 9, 1))), "as many cells, in other rows")
 
 	f := staggered.NewFlow(s.Grid)
 	f.Velocity().SetAll(1, 2)

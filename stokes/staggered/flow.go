@@ -28,7 +28,7 @@ func WrapFlow(g *Grid, vx, vz, p []float64) (*Flow, error) {
 	if _, err := WrapVector(g, vx, vz); err != nil {
 		return nil, err
 	}
-	if err := checkLength("p", p, g.NX()*g.NZ(), g); err != nil {
+	if err := checkLength("p", p, cells, g); err != nil {
 		return nil, err
 	}
 	return &Flow{Grid: g, VX: vx, VZ: vz, P: p}, nil
@@ -46,9 +46,10 @@ func (f *Flow) velocity() Vector { return Vector{Grid: f.Grid, X: f.VX, Z: f.VZ}
 // Pressure returns the pressure as a field that shares the flow's memory.
 func (f *Flow) Pressure() *Scalar { return &Scalar{Grid: f.Grid, Values: f.P} }
 
-// CopyFrom copies velocity and pressure of h, which must have as many cells.
+// CopyFrom copies velocity and pressure of h, which must have as many columns
+// and rows.
 func (f *Flow) CopyFrom(h *Flow) error {
-	if len(f.VX) != len(h.VX) || len(f.VZ) != len(h.VZ) || len(f.P) != len(h.P) {
+	if f.Grid.NX() != h.Grid.NX() || len(f.VX) != len(h.VX) || len(f.VZ) != len(h.VZ) || len(f.P) != len(h.P) {
 		return fmt.Errorf("staggered: copy of a flow on %v into one on %v", h.Grid, f.Grid)
 	}
 	copy(f.VX, h.VX)

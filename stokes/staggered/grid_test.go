@@ -79,7 +79,7 @@ func TestUniformIsRecognised(t *testing.T) {
 func TestBadGridsAreErrors(t *testing.T) {
 	nan, inf := math.NaN(), math.Inf(1)
 	unit := []float64{0, 1}
-	for want, make := range map[string]func() (*staggered.Grid, error){
+	for want, build := range map[string]func() (*staggered.Grid, error){
 		"nx is 0":             func() (*staggered.Grid, error) { return staggered.Uniform(0, 1, 1, 1) },
 		"nz is -3":            func() (*staggered.Grid, error) { return staggered.Uniform(1, -3, 1, 1) },
 		"width is 0":          func() (*staggered.Grid, error) { return staggered.Uniform(1, 1, 0, 1) },
@@ -99,7 +99,7 @@ func TestBadGridsAreErrors(t *testing.T) {
 			return staggered.Graded(8, 8, 1, 1, staggered.Grading{Bottom: 10000})
 		},
 	} {
-		g, err := make()
+		g, err := build()
 		assert.Nil(t, g)
 		assert.ErrorContains(t, err, "staggered: ")
 		if want == "bottom wall is 1e+04" {

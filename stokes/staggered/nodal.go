@@ -16,7 +16,7 @@ func NewNodal(g *Grid) *Nodal {
 // WrapNodal returns a field on g that uses values itself, without a copy. It
 // fails when values does not hold (nx+1)·(nz+1) numbers.
 func WrapNodal(g *Grid, values []float64) (*Nodal, error) {
-	if err := checkLength("values", values, (g.NX()+1)*(g.NZ()+1), g); err != nil {
+	if err := checkLength("values", values, corners, g); err != nil {
 		return nil, err
 	}
 	return &Nodal{Grid: g, Values: values}, nil

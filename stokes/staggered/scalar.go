@@ -22,7 +22,7 @@ func NewScalar(g *Grid) *Scalar {
 // WrapScalar returns a field on g that uses values itself, without a copy. It
 // fails when values does not hold nx·nz numbers.
 func WrapScalar(g *Grid, values []float64) (*Scalar, error) {
-	if err := checkLength("values", values, g.NX()*g.NZ(), g); err != nil {
+	if err := checkLength("values", values, cells, g); err != nil {
 		return nil, err
 	}
 	return &Scalar{Grid: g, Values: values}, nil
@@ -47,10 +47,10 @@ func (s *Scalar) Fill(f func(x, z float64) float64) { s.lattice().fill(f) }
 // SetAll sets every cell to v.
 func (s *Scalar) SetAll(v float64) { setAll(s.Values, v) }
 
-// CopyFrom copies the values of t, which must have as many cells.
+// CopyFrom copies the values of t, which must have as many columns and rows.
 func (s *Scalar) CopyFrom(t *Scalar) error {
-	if len(s.Values) != len(t.Values) {
-		return fmt.Errorf("staggered: copy of a field of %d cells into one of %d", len(t.Values), len(s.Values))
+	if s.Grid.NX() != t.Grid.NX() || s.Grid.NZ() != t.Grid.NZ() || len(s.Values) != len(t.Values) {
+		return fmt.Errorf("staggered: copy of a field on %v into one on %v", t.Grid, s.Grid)
 	}
 	copy(s.Values, t.Values)
 	return nil
@@ -63,7 +63,16 @@ func (s *Scalar) Clone() *Scalar {
 
 // Integral returns the integral over the box: the sum of value times cell area.
 func (s *Scalar) Integral() float64 {
-	return s.integrate(func(v float64) float64 { return v })
+	dx := s.Grid.DX()
+	total := 0.0
+	for k, dz := range s.Grid.DZ() {
+		sum := 0.0
+		for i, v := range s.Row(k) {
+			sum += v * dx[i]
+		}
+		total += sum * dz
+	}
+	return total
 }
 
 // Mean returns the area-weighted mean over the box.
@@ -71,7 +80,16 @@ func (s *Scalar) Mean() float64 { return s.Integral() / s.Grid.Area() }
 
 // RMS returns the root of the area-weighted mean square over the box.
 func (s *Scalar) RMS() float64 {
-	return math.Sqrt(s.integrate(func(v float64) float64 { return v * v }) / s.Grid.Area())
+	dx := s.Grid.DX()
+	total := 0.0
+	for k, dz := range s.Grid.DZ() {
+		sum := 0.0
+		for i, v := range s.Row(k) {
+			sum += v * v * dx[i]
+		}
+		total += sum * dz
+	}
+	return math.Sqrt(total / s.Grid.Area())
 }
 
 // HorizontalMeans stores the mean of each row of cells, from bottom to top, in
@@ -122,29 +140,26 @@ func (s *Scalar) lattice() lattice {
 	return lattice{xs: s.Grid.x.centres, zs: s.Grid.z.centres, values: s.Values}
 }
 
-// integrate sums row by row, so that the order does not depend on anything
-// but the grid.
-func (s *Scalar) integrate(f func(float64) float64) float64 {
-	dx := s.Grid.DX()
-	total := 0.0
-	for k, dz := range s.Grid.DZ() {
-		sum := 0.0
-		for i, v := range s.Row(k) {
-			sum += f(v) * dx[i]
-		}
-		total += sum * dz
-	}
-	return total
-}
-
 func setAll(values []float64, v float64) {
 	for j := range values {
 		values[j] = v
 	}
 }
 
-func checkLength(name string, values []float64, want int, g *Grid) error {
-	if len(values) != want {
+// A count is how many numbers a kind of field has on nx by nz cells.
+type count func(nx, nz int) int
+
+func cells(nx, nz int) int   { return nx * nz }
+func corners(nx, nz int) int { return (nx + 1) * (nz + 1) }
+func xFaces(nx, nz int) int  { return (nx + 1) * nz }
+func zFaces(nx, nz int) int  { return nx * (nz + 1) }
+
+// checkLength reports whether values hold one number for each place of g.
+func checkLength(name string, values []float64, places count, g *Grid) error {
+	if g == nil {
+		return fmt.Errorf("staggered: %s: grid is nil, want a grid", name)
+	}
+	if want := places(g.Cells()); len(values) != want {
 		return fmt.Errorf("staggered: %s holds %d numbers, want %d for %dx%d cells", name, len(values), want, g.NX(), g.NZ())
 	}
 	return nil

@@ -19,11 +19,10 @@ func NewVector(g *Grid) *Vector {
 // WrapVector returns a field on g that uses x and z themselves, without a
 // copy. It fails when they do not hold (nx+1)·nz and nx·(nz+1) numbers.
 func WrapVector(g *Grid, x, z []float64) (*Vector, error) {
-	nx, nz := g.Cells()
-	if err := checkLength("x", x, (nx+1)*nz, g); err != nil {
+	if err := checkLength("x", x, xFaces, g); err != nil {
 		return nil, err
 	}
-	if err := checkLength("z", z, nx*(nz+1), g); err != nil {
+	if err := checkLength("z", z, zFaces, g); err != nil {
 		return nil, err
 	}
 	return &Vector{Grid: g, X: x, Z: z}, nil
@@ -77,24 +76,16 @@ func (v *Vector) FillVertical(s *Scalar, factor float64) {
 // the face, half a cell at the walls: the integral of the scalar product over
 // the box, second order accurate.
 func (v *Vector) Dot(w *Vector) float64 {
-	return v.sumFaces(func(j int) float64 { return v.X[j] * w.X[j] }, func(j int) float64 { return v.Z[j] * w.Z[j] })
-}
-
-// sumFaces integrates one function of the face number over the box for each
-// kind of face, row by row.
-func (v *Vector) sumFaces(fx, fz func(j int) float64) float64 {
 	nx, nz := v.Grid.Cells()
 	dx, dz := v.Grid.DX(), v.Grid.DZ()
 	total := 0.0
 	for k := range nz {
+		vx, wx := v.X[k*(nx+1):][:nx+1], w.X[k*(nx+1):][:nx+1]
+		lower, upper := v.Z[k*nx:][:nx], v.Z[(k+1)*nx:][:nx]
+		wLower, wUpper := w.Z[k*nx:][:nx], w.Z[(k+1)*nx:][:nx]
 		sum := 0.0
-		for i := range dx {
-			j := k*(nx+1) + i
-			sum += 0.5 * dx[i] * (fx(j) + fx(j+1))
-		}
-		for i := range dx {
-			j := k*nx + i
-			sum += 0.5 * dx[i] * (fz(j) + fz(j+nx))
+		for i, width := range dx {
+			sum += 0.5 * width * (vx[i]*wx[i] + vx[i+1]*wx[i+1] + lower[i]*wLower[i] + upper[i]*wUpper[i])
 		}
 		total += sum * dz[k]
 	}
