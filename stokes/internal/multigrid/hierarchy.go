@@ -7,11 +7,12 @@ import "example.org/overturn/stokes/internal/team"
 type Hierarchy struct {
 	Levels []*Level
 	team   *team.Team
-	blocks []int  // members that work on each level
-	branch []bool // levels that an F-cycle visits twice
-	bottom *dense
-	finish *pipeline // replaces the last pass of a cycle, if not nil
-	done   bool      // that it did
+	blocks []int          // members that work on each level
+	branch []bool         // levels that an F-cycle visits twice
+	end    int            // the level that is solved directly
+	direct []*elimination // of each level; nil until it is one's turn
+	finish *pipeline      // replaces the last pass of a cycle, if not nil
+	done   bool           // that it did
 	s      []*scratch
 }
 
@@ -66,7 +67,8 @@ func NewHierarchy(x, z Axis, t *team.Team) *Hierarchy {
 		}
 		h.branch = append(h.branch, turn)
 	}
-	h.bottom = newDense(l)
+	h.direct = make([]*elimination, len(h.Levels))
+	h.endOn(len(h.Levels) - 1)
 	return h
 }
 
@@ -83,7 +85,32 @@ func (h *Hierarchy) Refresh() {
 		}
 		l.findJumps()
 	}
-	h.bottom.factor()
+	h.endOn(h.lastLevel())
+	h.direct[h.end].factor()
+}
+
+// endOn makes level k the one that is solved directly.
+func (h *Hierarchy) endOn(k int) {
+	h.end = k
+	if h.direct[k] == nil {
+		h.direct[k] = newElimination(h.Levels[k])
+	}
+}
+
+// lastLevel returns the level on which coarsening should end for the present
+// viscosity.
+func (h *Hierarchy) lastLevel() int {
+	last := len(h.Levels) - 1
+	if !h.Finest().jumps.sharp() {
+		return last
+	}
+	most := max(leastEffort, min(mostEffort, effortPerCell*h.Finest().cells()))
+	for k := 1; k < last; k++ {
+		if h.Levels[k].effort() <= most {
+			return k
+		}
+	}
+	return last
 }
 
 // RefreshFinest rebuilds what [Solver.Residual] needs and no more.
@@ -118,14 +145,14 @@ func (h *Hierarchy) Precondition(z, r Fields) {
 
 // cycle is an F-cycle from zero on level k.
 func (h *Hierarchy) cycle(k int) {
-	if k == len(h.Levels)-1 {
-		h.bottom.solve()
+	if k == h.end {
+		h.direct[k].solve()
 		return
 	}
 	p := &h.Levels[k].passes
 	h.down(k, p.freshDown, p.fresh)
 	h.cycle(k + 1)
-	if h.branch[k+1] {
+	if h.branch[k+1] && k+1 < h.end {
 		h.improve(k + 1)
 	}
 	h.up(k)
@@ -141,8 +168,8 @@ func (h *Hierarchy) improve(k int) {
 
 // descend is a V-cycle from zero on level k.
 func (h *Hierarchy) descend(k int) {
-	if k == len(h.Levels)-1 {
-		h.bottom.solve()
+	if k == h.end {
+		h.direct[k].solve()
 		return
 	}
 	p := &h.Levels[k].passes

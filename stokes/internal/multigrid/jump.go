@@ -42,6 +42,9 @@ type jumps struct {
 
 func (jp *jumps) none() bool { return len(jp.columns) == 0 }
 
+// sharp reports whether neighbours differ by more than jumpRatio.
+func (jp *jumps) sharp() bool { return !jp.none() && jp.sweeps == sharpSweeps }
+
 // row returns the columns of the cells of row j.
 func (jp *jumps) row(j int) []int32 { return jp.columns[jp.from[j]:jp.from[j+1]] }
 

@@ -148,35 +148,6 @@ func TestSmoothersKeepTheSolution(t *testing.T) {
 	}
 }
 
-func TestCoarsestLevelIsSolvedExactly(t *testing.T) {
-	for name, b := range boxes() {
-		p := newProblem(b, wavy)
-		l := p.sv.Levels[len(p.sv.Levels)-1]
-		l.balance(4)
-		want := l.u.clone()
-		p.sv.bottom.solve()
-		// Pressure has zero mean; a layer that slides freely, vx too.
-		free := newFields(l.size())
-		for c := range free.P {
-			free.X[c], free.P[c] = l.u.X[c]-want.X[c], l.u.P[c]-want.P[c]
-		}
-		shift, slide := free.P[l.stride+1], 0.0
-		if l.Drifts() {
-			slide = free.X[l.stride+1]
-		}
-		for j := 1; j <= l.Z.N; j++ {
-			for i := 1; i <= l.X.N; i++ {
-				c := j*l.stride + i
-				require.InDelta(t, shift, free.P[c], 1e-9, name)
-				if l.ix[c] > 0 {
-					require.InDelta(t, slide, free.X[c], 1e-9, name)
-				}
-				require.InDelta(t, want.Z[c], l.u.Z[c], 1e-9, name)
-			}
-		}
-	}
-}
-
 func TestDistributionRemovesMassDefects(t *testing.T) {
 	l := newProblem(boxes()["mixed"], wavy).sv.Finest()
 	l.u, l.f = newFields(l.size()), newFields(l.size())
