@@ -21,8 +21,9 @@ type Study struct {
 	Estimates []NamedEstimate
 
 	// Deviation is the largest distance of an observed order from 2 among the
-	// diagnostics, 1 where one does not converge at all: near zero on grids that
-	// resolve the state, above a few tenths on grids that do not.
+	// diagnostics, at most 1, and 1 where one does not converge at all or where
+	// the thermal boundary layers hold fewer than three cells on the coarsest of
+	// the last three grids: near zero on grids that resolve the state.
 	Deviation float64
 }
 
@@ -83,11 +84,11 @@ func Refine(ctx context.Context, p Problem, grids int, s *SteadySettings) (*Stud
 		return &Study{Solutions: solutions}, err
 	}
 	study := &Study{Solutions: solutions[len(solutions)-grids:]}
-	return study, study.estimate()
+	return study, study.estimate(p.Conductivity)
 }
 
 // estimate extrapolates each diagnostic.
-func (s *Study) estimate() error {
+func (s *Study) estimate(conductivity float64) error {
 	sizes := make([]float64, len(s.Solutions))
 	values := map[string][]float64{}
 	var names []string
@@ -114,17 +115,35 @@ func (s *Study) estimate() error {
 		s.Estimates = append(s.Estimates, NamedEstimate{Name: name, Estimate: e})
 	}
 	if len(sizes) > 2 {
-		s.distrust(values)
+		s.Deviation = s.deviation(values)
+		if s.Solutions[len(sizes)-3].cellsInLayer(conductivity) < layerCells {
+			s.Deviation = 1
+		}
+		s.distrust()
 	}
 	return nil
+}
+
+// layerCells is the number of cells that the thermal boundary layers must hold on
+// the coarsest of three grids for their orders to mean anything: with one or two,
+// an order of 2 is chance.
+const layerCells = 3
+
+// cellsInLayer returns the thickness of the thermal boundary layers, half the
+// temperature range over the gradient at the wall, in cells at the wall.
+func (s *Solution) cellsInLayer(conductivity float64) float64 {
+	dz := s.Temperature.Grid.DZ()
+	gradient := max(math.Abs(s.HeatFlowTop), math.Abs(s.HeatFlowBottom)) / conductivity
+	return 0.5 * extent(s.Temperature) / gradient / max(dz[0], dz[len(dz)-1])
 }
 
 // unchanging is the relative change between the finest two grids below which
 // the order of a diagnostic means nothing: it is converged, or fixed by symmetry.
 const unchanging = 1e-6
 
-// distrust widens the uncertainties by what the worst resolved diagnostic says.
-func (s *Study) distrust(values map[string][]float64) {
+// deviation returns the largest distance of an order from that of the scheme.
+func (s *Study) deviation(values map[string][]float64) float64 {
+	largest := 0.0
 	for _, e := range s.Estimates {
 		v := values[e.Name]
 		n := len(v)
@@ -136,11 +155,16 @@ func (s *Study) distrust(values map[string][]float64) {
 		switch {
 		case !finite(v), math.Abs(v[n-1]-v[n-2]) <= unchanging*size:
 		case math.IsNaN(e.Order):
-			s.Deviation = 1
+			return 1
 		default:
-			s.Deviation = max(s.Deviation, min(1, math.Abs(e.Order-SchemeOrder)))
+			largest = max(largest, min(1, math.Abs(e.Order-SchemeOrder)))
 		}
 	}
+	return largest
+}
+
+// distrust widens the uncertainties by what the worst resolved diagnostic says.
+func (s *Study) distrust() {
 	for i := range s.Estimates {
 		e := &s.Estimates[i]
 		e.Uncertainty = max(e.Uncertainty, safety*s.Deviation*s.Deviation*math.Abs(e.Value-e.Finest))

@@ -65,7 +65,7 @@ func studyOf(t *testing.T, of func(h float64) Diagnostics) *Study {
 		study.Solutions = append(study.Solutions,
 			&Solution{Diagnostics: of(1 / float64(n)), Temperature: staggered.NewScalar(square(t, n))})
 	}
-	require.NoError(t, study.estimate())
+	require.NoError(t, study.estimate(1))
 	return study
 }
 
@@ -106,4 +106,27 @@ func TestWorstDiagnosticCountsForAll(t *testing.T) {
 func TestStudyWithoutGrid(t *testing.T) {
 	_, err := Refine(context.Background(), Problem{}, 2, nil)
 	assert.ErrorContains(t, err, "Grid is nil")
+}
+
+// Boundary layers of fewer than three cells on the coarsest grid: whatever the
+// orders are, nothing is known.
+func TestUnresolvedBoundaryLayersAreDistrusted(t *testing.T) {
+	for flux, want := range map[float64]float64{2: 0, 1.2: 0, 1.4: 1, 4: 1} {
+		study := &Study{}
+		for _, n := range []int{8, 16, 32} {
+			temperature := staggered.NewScalar(square(t, n))
+			temperature.Values[0] = 1
+			h := 1 / float64(n)
+			study.Solutions = append(study.Solutions, &Solution{
+				Diagnostics: Diagnostics{NuTop: 3 + h*h, HeatFlowTop: flux}, Temperature: temperature,
+			})
+		}
+		// A layer of half the range over the gradient flux/k, in cells of 1/8.
+		conductivity := 1.0
+		if flux == 2 {
+			conductivity = 2
+		}
+		require.NoError(t, study.estimate(conductivity))
+		assert.InDelta(t, want, study.Deviation, 1e-9, "flux %v", flux)
+	}
 }
