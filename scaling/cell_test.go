@@ -265,6 +265,29 @@ func TestCoolingPieces(t *testing.T) {
 	require.NoError(t, err)
 	require.InEpsilon(t, 0.5, math.Erf(float64(z)/(2*math.Sqrt(1e9))), 1e-12)
 
+	// The deficit is the integral of the flux; its rate is the flux.
+	m := mantle().Material
+	const at, dt = 1e15, 1e10
+	before, err := HeatDeficit(m, 1000, at-dt)
+	require.NoError(t, err)
+	after, err := HeatDeficit(m, 1000, at+dt)
+	require.NoError(t, err)
+	flux, err := CoolingFlux(m.Conductivity, 1000, 1e-6, at)
+	require.NoError(t, err)
+	require.InEpsilon(t, float64(flux), (after-before)/(2*dt), 1e-6)
+	pull, err := SheetPull(mantle(), 1000, at)
+	require.NoError(t, err)
+	// ρ α ΔT g over a thickness of 2√(κt/π)
+	require.InEpsilon(t, 3300*3e-5*1000*10*2*math.Sqrt(1e9/math.Pi), float64(pull), 1e-12)
+	_, err = HeatDeficit(m, 1000, -1)
+	require.ErrorContains(t, err, "time")
+	_, err = SheetPull(mantle(), 1000, -1)
+	require.ErrorContains(t, err, "time")
+	_, err = HeatDeficit(boussinesq.Material{}, 1000, 1)
+	require.ErrorContains(t, err, "Material.Density")
+	_, err = SheetPull(boussinesq.Layer{}, 1000, 1)
+	require.ErrorContains(t, err, "Layer.Gravity")
+
 	nan := math.NaN()
 	_, err = CoolingFlux(0, 1, 1, 1)
 	require.ErrorContains(t, err, "conductivity")

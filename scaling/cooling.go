@@ -3,6 +3,7 @@ package scaling
 import (
 	"math"
 
+	"example.org/overturn/boussinesq"
 	"example.org/overturn/scaling/internal/check"
 	"example.org/overturn/units"
 )
@@ -55,6 +56,38 @@ func GradientThickness(kappa units.Diffusivity, t units.Time) (units.Length, err
 		return 0, err
 	}
 	return check.Result(pkg, "thickness", units.Length(math.Sqrt(math.Pi*float64(kappa)*float64(t))))
+}
+
+// HeatDeficit returns 2ρc ΔT √(κt/π), the heat that a half-space has lost per
+// area at the time t, in J/m²: the integral of [CoolingFlux].
+func HeatDeficit(m boussinesq.Material, drop units.TemperatureDifference, t units.Time) (float64, error) {
+	err := check.First(
+		check.Positive(pkg, "Material.Density", m.Density), check.Positive(pkg, "Material.SpecificHeat", m.SpecificHeat),
+		check.Positive(pkg, "Material.Conductivity", m.Conductivity),
+		check.Finite(pkg, "temperature drop", drop), check.NotNegative(pkg, "time", t),
+	)
+	if err != nil {
+		return 0, err
+	}
+	heat := float64(m.Density) * float64(m.SpecificHeat)
+	kappa := float64(m.Conductivity) / heat
+	return check.Result(pkg, "heat deficit", 2*heat*float64(drop)*math.Sqrt(kappa*float64(t)/math.Pi))
+}
+
+// SheetPull returns the weight, per area of a plate that has cooled for the time
+// t, by which it is heavier than warm fluid: gα/c times the [HeatDeficit]. Times
+// the length of a sheet that hangs down it is the pull of that sheet per length
+// along the strike.
+func SheetPull(l boussinesq.Layer, drop units.TemperatureDifference, t units.Time) (units.Pressure, error) {
+	err := check.First(check.Positive(pkg, "Layer.Gravity", l.Gravity), check.Positive(pkg, "Material.Expansivity", l.Material.Expansivity))
+	if err != nil {
+		return 0, err
+	}
+	deficit, err := HeatDeficit(l.Material, drop, t)
+	if err != nil {
+		return 0, err
+	}
+	return check.Result(pkg, "pull", units.Pressure(deficit*float64(l.Gravity)*float64(l.Material.Expansivity)/float64(l.Material.SpecificHeat)))
 }
 
 // SurfaceSpeed returns the mean speed of a free wall, in κ/d, at which
