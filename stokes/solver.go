@@ -117,6 +117,9 @@ func (sv *Solver) SolveWithSource(ctx context.Context, flow *staggered.Flow, vis
 func (sv *Solver) iterate(ctx context.Context, flow *staggered.Flow) (Report, error) {
 	sv.rest()
 	rest := sv.mg.Residual(&sv.load)
+	if !(max(rest.Weighted, rest.Momentum) <= math.MaxFloat64) {
+		return Report{}, errors.New("stokes: the squares of forces or wall velocities overflow, want them in larger units")
+	}
 	sv.unit = rest.Weighted
 	sv.history = sv.history[:0]
 	method, err := sv.choose()
