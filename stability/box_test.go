@@ -11,6 +11,7 @@ import (
 // In every box, the first and the second pattern are those of the neutral
 // curve at the wavenumbers that fit.
 func TestBoxesOfManyWidths(t *testing.T) {
+	skipIfShort(t)
 	s, err := NewSolver(Layer{Bottom: Rigid}, nil)
 	require.NoError(t, err)
 	for _, aspect := range []float64{0.2, 0.5, 1, 1.7, 3, 7.3} {

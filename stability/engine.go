@@ -87,8 +87,9 @@ func (e *engine) refine(on *ladder, c pencil.Curve, pt pencil.Point, first int, 
 				ErrNotConverged, cur.valueError/cur.size, lv.layout.Size(), e.tolerance)
 		}
 		if done {
-			if lo >= hi {
+			if lo >= hi { // the wavenumber was given
 				lv.work.Bend(c, &cur.Solution)
+				cur.kError = 0
 			}
 			cur.re, cur.im = lv.work.Vector()
 			return cur, err

@@ -69,6 +69,7 @@ func TestTimeOfOnset(t *testing.T) {
 
 // A disturbance that has to grow faster needs a larger R.
 func TestFasterGrowthNeedsMore(t *testing.T) {
+	skipIfShort(t)
 	last := 0.0
 	for _, s := range []float64{-0.4, -0.25, 0, 1, 5} {
 		o, err := CoolingHalfSpace{Exponent: s}.Critical()

@@ -219,6 +219,7 @@ func rotatingFreeOnset(ta, pr float64) (least float64, oscillates bool) {
 // The first onset of a rotating layer is the right one of two branches, over
 // five decades of the Taylor number and two of the Prandtl number.
 func TestFirstOnsetOfRotatingLayers(t *testing.T) {
+	skipIfShort(t)
 	for _, ta := range []float64{30, 900, 4e3, 2e4, 1.1e5} {
 		for _, pr := range []float64{0.01, 0.06, 0.3, 0.62, 0.68, 3} {
 			want, oscillates := rotatingFreeOnset(ta, pr)
@@ -234,6 +235,7 @@ func TestFirstOnsetOfRotatingLayers(t *testing.T) {
 // does just above: for layers whose neutral curves have more than one minimum, or
 // whose onset oscillates.
 func TestNothingGrowsBelowTheFirstOnset(t *testing.T) {
+	skipIfShort(t)
 	for _, l := range []Layer{
 		{Bottom: Rigid, Top: Rigid, Viscosity: Exponential(math.Log(3e4), 0.5)},
 		twoMinima(),
@@ -266,6 +268,7 @@ func twoMinima() Layer {
 // The search is not fooled by the wrong one of two minima: the neutral curve of
 // twoMinima has both, and changing the viscosity of the weak part exchanges them.
 func TestTwoMinima(t *testing.T) {
+	skipIfShort(t)
 	minima := func(weak float64) (ks, values []float64, o Onset) {
 		l := twoMinima()
 		l.Viscosity = Layered([]float64{0.12}, []float64{weak, 1})

@@ -22,6 +22,14 @@ type reference struct {
 	definition         string
 }
 
+// skipIfShort skips what takes longer than a second or two.
+func skipIfShort(t *testing.T) {
+	t.Helper()
+	if testing.Short() {
+		t.Skip("takes seconds")
+	}
+}
+
 func readReferences(t *testing.T) []reference {
 	t.Helper()
 	file, err := os.Open("testdata/stability.csv")
@@ -110,7 +118,10 @@ func TestReferenceValues(t *testing.T) {
 		"G": sectionG, "H": sectionH, "I": sectionI, "J": sectionJ,
 	}
 	worst := map[string]float64{}
-	for _, r := range readReferences(t) {
+	for i, r := range readReferences(t) {
+		if testing.Short() && i%9 != 0 {
+			continue
+		}
 		t.Run(r.id, func(t *testing.T) {
 			got := compute[r.section()](t, r)
 			rel := math.Abs(got-r.value) / math.Abs(r.value)
@@ -310,8 +321,8 @@ func sectionD(t *testing.T, r reference) float64 {
 	return r.asked(t, l, Search{})
 }
 
-// sublayer extrapolates nothing: at γ = 30 the top of the layer is 11 orders of
-// magnitude stiffer, and the limit is reached to exp(-2·0.38·30).
+// sublayer extrapolates nothing: at γ = 70 the top of the layer is stiffer by 30
+// orders of magnitude, and the limit is reached to exp(-2·0.38·70).
 func sublayer(t *testing.T, r reference) float64 {
 	const gamma = 70
 	o, err := Layer{Viscosity: Exponential(gamma, 1)}.Critical()

@@ -382,6 +382,7 @@ func shootingOf(t *testing.T, l Layer, k float64) *shooting {
 // Stationary neutral states, growth rates and oscillations agree with shooting
 // to 1e-9, in settings that have little in common.
 func TestAgreesWithShooting(t *testing.T) {
+	skipIfShort(t)
 	const tolerance = 1e-9
 	tests := []struct {
 		name  string
@@ -426,6 +427,7 @@ func TestAgreesWithShooting(t *testing.T) {
 }
 
 func TestOscillationsAgreeWithShooting(t *testing.T) {
+	skipIfShort(t)
 	const tolerance = 1e-9
 	tests := []struct {
 		name  string

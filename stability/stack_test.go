@@ -99,6 +99,7 @@ func TestDeformableSurface(t *testing.T) {
 }
 
 func TestFastestIsTheLargest(t *testing.T) {
+	skipIfShort(t)
 	s := Stack{Gravity: 1, Bottom: Rigid, Top: Rigid, Layers: []Stratum{{0.1, 0, 0.01, 0}, {0.5, 1, 1, 0}, {0.4, 1.3, 0.1, 0}}}
 	fast, err := s.Fastest()
 	require.NoError(t, err)

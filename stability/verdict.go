@@ -80,6 +80,9 @@ func (v Verdict) String() string {
 	default:
 		fmt.Fprintf(&b, "Convection %s in at a wavelength of %.3g m, two rolls.\n", sets, v.Wavelength.In(units.Metre))
 	}
+	if v.Onset.Oscillates() {
+		b.WriteString("It begins as an oscillation.\n")
+	}
 	if v.GrowthTime > 0 {
 		fmt.Fprintf(&b, "What grows fastest has a wavelength of %.3g m, and grows by a factor e in %s.\n",
 			v.FastestWavelength.In(units.Metre), duration(v.GrowthTime))

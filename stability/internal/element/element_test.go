@@ -175,13 +175,12 @@ func TestWeightedConstant(t *testing.T) {
 
 func TestSpansAndNodeValues(t *testing.T) {
 	l := NewLayout([]float64{0, 0.4, 1}, 5, []Field{{Class: C1, Fixed: [2]int{2, 1}}, {Class: C0, Fixed: [2]int{1, 1}}})
-	offset, count := l.Span(1)
-	first, n := l.Span(0)
-	assert.Equal(t, 0, first)
-	assert.Equal(t, n, offset)
-	assert.Equal(t, l.Size(), offset+count)
-	assert.Equal(t, 3*2-3+2*2, n) // nodes, fixed ends, bubbles
-	assert.Equal(t, 3-2+2*4, count)
+	flow, heat := l.spans[0], l.spans[1]
+	assert.Equal(t, 0, flow.offset)
+	assert.Equal(t, flow.count, heat.offset)
+	assert.Equal(t, l.Size(), heat.offset+heat.count)
+	assert.Equal(t, 3*2-3+2*2, flow.count) // nodes, fixed ends, bubbles
+	assert.Equal(t, 3-2+2*4, heat.count)
 	x := make([]float64, l.Size())
 	x[l.NodeValue(0, 1)] = 2.5
 	assert.InDelta(t, 2.5, l.Value(0, 0, x, 0.4), 1e-14)

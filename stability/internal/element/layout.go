@@ -51,11 +51,6 @@ func NewLayout(nodes []float64, degree int, fields []Field) *Layout {
 // Size returns the number of unknowns.
 func (l *Layout) Size() int { return l.size }
 
-// Span returns the first unknown of a field and their number.
-func (l *Layout) Span(field int) (offset, count int) {
-	return l.spans[field].offset, l.spans[field].count
-}
-
 func newSpan(f Field, elements, p, offset int) span {
 	s := span{offset: offset, local: localCount(f.Class, p), constant: -1}
 	s.index = make([]int, elements*s.local)

@@ -67,16 +67,6 @@ func New(n int, blocks []Block) *Pencil {
 // Size returns the number of unknowns.
 func (p *Pencil) Size() int { return p.n }
 
-// Has reports whether a part has a block.
-func (p *Pencil) Has(part int) bool {
-	for i := range p.blocks {
-		if p.blocks[i].Part == part {
-			return true
-		}
-	}
-	return false
-}
-
 // Unscale multiplies a solution with the scale of its unknowns, in place: the
 // result are coefficients of the basis that the blocks were made with.
 func (p *Pencil) Unscale(x []float64) { floats.Mul(x, p.scale) }

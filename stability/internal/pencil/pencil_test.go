@@ -83,6 +83,21 @@ func TestGrowthEigenvaluesWithoutInertia(t *testing.T) {
 	assert.Zero(t, imag(found[0]))
 }
 
+// Only the equations that a part occurs in are kept for its eigenvalues.
+func TestReducedProblemIsSmall(t *testing.T) {
+	w := NewWorkspace(New(3, []Block{
+		block(Base, 0, 3, 1, 0, 1, 4, 1, 0, 1, 5),
+		{Part: Mass, Row: 2, Rows: 1, Col: 2, Cols: 1, Data: []float64{-1}},
+		{Part: FirstDrive, Row: 0, Rows: 1, Col: 1, Cols: 2, Data: []float64{-1, -2}},
+	}))
+	_, err := w.GrowthEigenvalues(Point{K: 1, Sigma: 3})
+	require.NoError(t, err)
+	assert.Equal(t, []int{2}, w.eigen.where)
+	_, err = w.DriveEigenvalues(Point{K: 1}, 0)
+	require.NoError(t, err)
+	assert.Equal(t, []int{0}, w.eigen.where)
+}
+
 func TestGrowthEigenvaluesOfASpiral(t *testing.T) {
 	w := NewWorkspace(spiral())
 	found, err := w.GrowthEigenvalues(Point{K: 2, Sigma: 20, Drive: [3]float64{5}})
@@ -217,14 +232,6 @@ func TestSlowestDecay(t *testing.T) {
 	want := (2 - math.Sqrt2 + 9) / 2
 	assert.InEpsilon(t, want, w.SlowestDecay(3), 1e-3)
 	assert.GreaterOrEqual(t, w.SlowestDecay(3), want*(1-1e-12))
-}
-
-func TestHas(t *testing.T) {
-	p := parabola()
-	assert.True(t, p.Has(Base))
-	assert.True(t, p.Has(FirstDrive))
-	assert.False(t, p.Has(FirstDrive+1))
-	assert.Equal(t, 1, p.Size())
 }
 
 // The eigenvalue routine for matrices without symmetry allocates a little by
