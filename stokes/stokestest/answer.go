@@ -37,7 +37,7 @@ func (r *trialRun) sample() error {
 		}
 		var err error
 		if *q.to, err = q.field.Sample(r.Grid); err != nil {
-			return fmt.Errorf("Answer.%s: %w", q.name, err)
+			return fmt.Errorf("in Answer.%s: %w", q.name, err)
 		}
 	}
 	return nil

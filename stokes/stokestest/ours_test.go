@@ -96,14 +96,16 @@ func walls(p stokestest.Problem) stokes.Walls {
 func TestOurSolverConforms(t *testing.T) {
 	set := &stokestest.Settings{}
 	if testing.Short() {
-		set.Cells = []int{16, 32}
-		set.Slack = 0.6
+		set.Cells, set.Slack = []int{16, 32}, 0.4
+		set.Cases = cases(t, "box mode", "column jump", "channel", "film on a slope", "manufactured, no slip", "manufactured, periodic")
 	}
 	r, err := stokestest.Run(t.Context(), ours, set)
 	require.NoError(t, err)
 	t.Logf("\n%v", r)
 	require.NoError(t, r.Err())
-	require.Len(t, r.Results, len(exact.All()))
+	if !testing.Short() {
+		require.Len(t, r.Results, len(exact.All()))
+	}
 	for _, res := range r.Results {
 		require.NoError(t, res.Skipped)
 		require.GreaterOrEqual(t, len(res.Checks), 4, res.Name)

@@ -103,6 +103,8 @@ func TestOnLattice(t *testing.T) {
 	f := trial.Lattice([]float64{0, 1, 2 + 1e-12}, box.Z, nil)
 	assert.True(t, f.OnLattice(box.X, box.Z))
 	assert.False(t, f.OnLattice(box.X, box.ZCentres()))
+	assert.False(t, f.OnLattice(box.X[:2], box.Z))
+	assert.False(t, trial.Lattice(nil, nil, nil).OnLattice(nil, nil))
 	assert.False(t, f.OnLattice(box.Z, box.Z))
 	assert.False(t, trial.Points(box.X, box.Z, nil).OnLattice(box.X, box.Z))
 	assert.True(t, trial.Field{}.IsMissing())
