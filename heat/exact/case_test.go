@@ -2,6 +2,7 @@ package exact
 
 import (
 	"math"
+	"strings"
 	"testing"
 
 	"github.com/stretchr/testify/assert"
@@ -28,7 +29,11 @@ func TestAllCasesAreComplete(t *testing.T) {
 		names[c.Name] = true
 		assert.NotEmpty(t, c.Name)
 		assert.NotEmpty(t, c.Source, c.Name)
-		assert.Equal(t, Orders{2, 2}, c.Expect, c.Name)
+		expect := Orders{2, 2}
+		if strings.HasPrefix(c.Name, "gaussian") {
+			expect.Flux = 0
+		}
+		assert.Equal(t, expect, c.Expect, c.Name)
 		for _, w := range []Wall{c.Walls.Left, c.Walls.Right, c.Walls.Bottom, c.Walls.Top} {
 			kinds[w]++
 		}
