@@ -13,6 +13,7 @@ type Hierarchy struct {
 	direct []*elimination // of each level; nil until it is one's turn
 	finish *pipeline      // replaces the last pass of a cycle, if not nil
 	done   bool           // that it did
+	full   bool           // levels are ready for full multigrid
 	s      []*scratch
 }
 

@@ -2,7 +2,9 @@ package multigrid
 
 import (
 	"fmt"
+	"math"
 	"testing"
+	"time"
 )
 
 // Kernels per cell. A work unit is one residual of the finest level.
@@ -63,6 +65,7 @@ func BenchmarkKernels(b *testing.B) {
 			{"cycle", func() { sv.Precondition(sv.z[0], sv.R) }},
 			{"apply2", func() { sv.k = 2; sv.run(0, sv.applyPass) }},
 			{"update2", func() { sv.k = 2; sv.run(0, sv.updatePass) }},
+			{"full", func() { sv.solveFull(sv.z[0], sv.R) }},
 			{"refresh", func() { sv.Refresh() }},
 			{"jumps", func() { l.findJumps() }},
 		} {
@@ -92,4 +95,30 @@ func BenchmarkRelaxJumps(b *testing.B) {
 		sv.relaxJumps(0)
 	}
 	b.ReportMetric(float64(b.Elapsed().Nanoseconds())/float64(b.N*len(jp.columns)*jp.sweeps), "ns/cell")
+}
+
+// Full multigrid in work units: its time over that of a residual, the shortest
+// of both, taken by turns in one process.
+func BenchmarkFullMultigrid(b *testing.B) {
+	for _, n := range []int{64, 128, 256, 512, 1024} {
+		b.Run(fmt.Sprintf("cells=%dx%d", n, n), func(b *testing.B) {
+			p := newProblem(square(n), func(x, z float64) float64 { return 1 })
+			sv := p.sv
+			sv.X.clear()
+			sv.Residual(p)
+			sv.grow(1)
+			r := sv.R.clone()
+			sv.finish = nil // the operator that follows is no part of it
+			full, residual := time.Duration(math.MaxInt64), time.Duration(math.MaxInt64)
+			for b.Loop() {
+				start := time.Now()
+				sv.solveFull(sv.z[0], r)
+				middle := time.Now()
+				sv.Residual(noLoad{})
+				full, residual = min(full, middle.Sub(start)), min(residual, time.Since(middle))
+			}
+			b.ReportMetric(full.Seconds()/residual.Seconds(), "work-units")
+			b.ReportMetric(float64(full.Nanoseconds())/float64(3*n*n), "ns/unknown")
+		})
+	}
 }

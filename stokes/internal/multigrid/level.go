@@ -18,7 +18,8 @@ type Level struct {
 
 	jumps jumps // cells near jumps of viscosity
 
-	mx, mz *merge // to the next coarser level; nil on the coarsest
+	mx, mz *merge  // to the next coarser level; nil on the coarsest
+	cx, cz *cubics // from the next coarser level; nil until they are needed
 	passes passes
 }
 

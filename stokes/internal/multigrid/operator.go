@@ -11,6 +11,8 @@ type scratch struct {
 	carry []float64 // restricted z-residuals of the faces inside the last coarse row
 	at    int       // fine row that follows it
 	of    *Level
+
+	wide []float64 // a row that goes on at both ends
 }
 
 func newScratch(stride int) *scratch {
@@ -23,7 +25,7 @@ func newScratch(stride int) *scratch {
 	return &scratch{
 		tau: next(), tauUp: next(), szz: next(), szzUp: next(), sxx: next(),
 		rx: next(), rz: next(), rp: next(), cx: next(), cz: next(), cp: next(),
-		carry: next(),
+		carry: next(), wide: make([]float64, stride+2*beyond),
 	}
 }
 

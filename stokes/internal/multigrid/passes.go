@@ -12,6 +12,8 @@ type passes struct {
 	freshDown, down, up             *pipeline
 	fresh, sweep, restrict, prolong *pipeline
 	upStages                        []stage
+
+	load, interpolate func(member int) // of full multigrid; nil until it is needed
 }
 
 // sweepStages are the distributive sweep. The lags and leads follow from what

@@ -37,7 +37,8 @@ type Solver struct {
 	parts []float64 // of the present q along the earlier ones
 
 	load   Load
-	k      int // present direction
+	k      int  // present direction
+	first  bool // the next direction is to be found by full multigrid
 	sums   []float64
 	totals []float64
 	step   float64
@@ -158,6 +159,7 @@ func (sv *Solver) Solve(ctx context.Context, load Load, lim Limits) (Norms, int,
 	done := 0
 	for done < lim.Iterations && norms.Weighted > lim.Target {
 		before := norms.Weighted
+		sv.first = done == 0 && !sv.Finest().jumps.sharp()
 		n, err := sv.round(ctx, lim, done, before)
 		done += n
 		sv.combine()
@@ -207,7 +209,12 @@ func (sv *Solver) round(ctx context.Context, lim Limits, done int, start float64
 // or false when the direction adds nothing.
 func (sv *Solver) iterate() (float64, bool) {
 	k, m := sv.k, len(sv.z)
-	sv.Precondition(sv.z[k], sv.R)
+	if sv.first {
+		sv.solveFull(sv.z[k], sv.R)
+		sv.first = false
+	} else {
+		sv.Precondition(sv.z[k], sv.R)
+	}
 	if !sv.done {
 		sv.run(0, sv.applyPass)
 	}
