@@ -14,7 +14,7 @@ import (
 
 // Classes of viscosity in the unit box: a is uniform, b3 to b10 fall smoothly
 // with temperature by 10³ to 10¹⁰, c6 jumps by 10⁶ at x = 0.53, e4 has a stiff
-// layer, d3 and d-3 eight stiff or weak circles.
+// layer, d3, d6 and d-3 eight stiff or weak circles.
 var classes = []struct {
 	name string
 	eta  func(x, z float64) float64
@@ -31,6 +31,7 @@ var classes = []struct {
 	}},
 	{"e4", func(x, z float64) float64 { return 1 + 9999*float64(int(z*3)&1) }},
 	{"d3", circles(1e3)},
+	{"d6", circles(1e6)},
 	{"d-3", circles(1e-3)},
 }
 
