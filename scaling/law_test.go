@@ -115,6 +115,107 @@ func TestRange(t *testing.T) {
 	require.Equal(t, "<= 3", Limit{RayleighNumber, 0, 3}.interval())
 }
 
+// The ranges of the laws, as their sources (or, where they have none, their
+// comments) give them.
+func TestRangesOfTheCatalogue(t *testing.T) {
+	inf := math.Inf(1)
+	want := map[string][]Limit{
+		"one-mode loop":                         {{RayleighNumber, 27 * math.Pow(math.Pi, 4) / 4, inf}},
+		"steady rolls, free walls, infinite Pr": {{RayleighNumber, 1e6, inf}, {CellWidth, 0.1, 10}, {PrandtlNumber, 100, inf}},
+		// Wen et al. (2020): periods π/5 to 4π, Pr 0.01 to 100
+		"steady rolls, free walls, finite Pr":        {{RayleighNumber, 1e6, inf}, {CellPeriod, 0.628318530717958, 12.5663706143592}, {PrandtlNumber, 0.01, 100}},
+		"steady rolls, free walls, finite Pr: speed": {{RayleighNumber, 1e6, inf}, {CellPeriod, 0.628318530717958, 12.5663706143592}, {PrandtlNumber, 0.01, 100}},
+		"steady rolls, rigid walls, infinite Pr":     {{RayleighNumber, 1e6, inf}, {CellWidth, 0.1, 2.5}, {PrandtlNumber, 100, inf}},
+		"steady rolls of best width, rigid walls":    {{RayleighNumber, 1e7, 1e9}, {PrandtlNumber, 6, 8}},
+		"porous layer":                       {{PorousRayleighNumber, 40, 400}},
+		"turbulent layer, heat flux":         {{RayleighNumber, 1e5, 1e14}, {PrandtlNumber, 1e-3, 1e4}},
+		"turbulent layer, Reynolds number":   {{RayleighNumber, 1e5, 1e14}, {PrandtlNumber, 1e-3, 1e4}},
+		"stagnant lid, time dependent":       {{LidParameter, 4, inf}},
+		"stagnant lid, laboratory":           {{LidParameter, 4, inf}, {FrankKamenetskiiParameter, 0, 13.8155105579643}},
+		"stagnant lid, steady":               {{LidParameter, 4, inf}},
+		"onset under a stagnant lid":         {{LidParameter, 4, inf}},
+		"bound of the stagnant lid in 3-D":   nil,
+		"bound of bimodal flow in 3-D":       nil,
+		"bound of plate motion":              nil,
+		"horizontal liquid layer":            {{RayleighNumber, 3e5, 7e9}, {PrandtlNumber, 0.02, 8750}},
+		"wide horizontal layer, all regimes": {{RayleighNumber, 0, 1e9}},
+		"inclined air layer":                 {{RayleighNumber, 0, 1e5}, {Inclination, 0, 1.0471975511966}, {Slenderness, 12, inf}, {PrandtlNumber, 0.68, 0.75}},
+		"square slot":                        {{Slenderness, 1, 2}, {PrandtlNumber, 1e-3, 1e5}, {SlotRayleighNumber, 1e3, inf}},
+		"tall slot":                          {{RayleighNumber, 1e3, 1e10}, {Slenderness, 2, 10}, {PrandtlNumber, 0, 1e5}},
+		"very tall slot":                     {{RayleighNumber, 1e4, 1e7}, {Slenderness, 10, 40}, {PrandtlNumber, 1, 2e4}},
+		"slot, turbulent":                    {{RayleighNumber, 1e6, 1e9}, {Slenderness, 1, 40}, {PrandtlNumber, 1, 20}},
+		"vertical plate, all regimes":        {{RayleighNumber, 0.1, 1e12}},
+		"vertical plate, laminar":            {{RayleighNumber, 0.1, 1e9}},
+		"vertical plate, rough, laminar":     {{RayleighNumber, 1e4, 1e9}},
+		"vertical plate, rough, turbulent":   {{RayleighNumber, 1e9, 1e13}},
+		"horizontal cylinder":                {{RayleighNumber, 0, 1e12}},
+		"hot plate facing up, laminar":       {{RayleighNumber, 1e4, 1e7}},
+		"hot plate facing up, turbulent":     {{RayleighNumber, 1e7, 1e11}},
+		"hot plate facing down, older":       {{RayleighNumber, 1e5, 1e10}},
+		"hot plate facing down, newer":       {{RayleighNumber, 1e5, 1e10}},
+	}
+	seen := 0
+	for _, l := range All() {
+		limits, ok := want[l.Name]
+		if !ok {
+			continue // the marginal laws, whose range is that of their parameter, and exponents
+		}
+		seen++
+		require.Len(t, l.Limits, len(limits), l.Name)
+		for i, limit := range limits {
+			require.Equal(t, limit.Group, l.Limits[i].Group, l.Name)
+			require.InDelta(t, limit.Min, l.Limits[i].Min, 1e-12*limit.Min, l.Name)
+			if math.IsInf(limit.Max, 1) {
+				require.True(t, math.IsInf(l.Limits[i].Max, 1), l.Name)
+			} else {
+				require.InEpsilon(t, limit.Max, l.Limits[i].Max, 1e-12, l.Name)
+			}
+		}
+	}
+	require.Equal(t, len(want), seen)
+
+	// The marginal laws begin where they give Nu = 1, or a layer as thick as the
+	// depth.
+	for _, l := range []Law{MarginalLayer(900, Free), HowardCycle(900, Free), WholeLayer(900, 0.3, Free), MarginalTop(900, Free), MarginalMixed(900, Free)} {
+		least := l.Limits[0].Min
+		require.InEpsilon(t, 1, l.Evaluate(Groups{}.with(l.Basis, least)), 1e-12, l.Name)
+		require.True(t, l.Holds(Groups{}.with(l.Basis, least)))
+		require.False(t, l.Holds(Groups{}.with(l.Basis, 0.999*least)))
+		require.True(t, math.IsInf(l.Limits[0].Max, 1))
+	}
+}
+
+// Correlations without a row among the check values, by hand at powers of ten.
+func TestPowerLawsOfTheHandbooks(t *testing.T) {
+	rough, roughTurbulent := VerticalPlateRough()
+	up, upTurbulent := HotPlateUp()
+	older, newer := HotPlateDown()
+	for _, tt := range []struct {
+		law    Law
+		ra, nu float64
+	}{
+		{MacGregorEmeryTurbulent(), 1e9, 46}, {rough, 1e8, 59}, {roughTurbulent, 1e12, 1000}, {up, 1e4, 5.4}, {upTurbulent, 1e9, 150},
+		{older, 1e8, 27}, {newer, 1e10, 52},
+	} {
+		nu, err := tt.law.At(Groups{Rayleigh: tt.ra})
+		require.NoError(t, err)
+		require.InEpsilon(t, tt.nu, nu, 1e-12, tt.law.Name)
+	}
+	nu, err := BestRigidRolls().At(Groups{Rayleigh: 1e8})
+	require.NoError(t, err)
+	require.InEpsilon(t, 0.115*math.Pow(10, 2.48), nu, 1e-12)
+	// exponents that are known alone
+	var exponents []float64
+	for _, l := range exponentLaws() {
+		e, ok := l.Exponent()
+		require.True(t, ok)
+		exponents = append(exponents, e)
+	}
+	// Goluskin & Spiegel (2012), Okuda et al. (2025), Wen et al. (2022) at fixed
+	// and at best period, Fowler (1985), Howard's argument in a porous layer
+	require.Equal(t, []float64{-0.2, 1. / 6, 0.25, 1. / 3, 0.2, 1}, exponents)
+}
+
 func TestLawErrors(t *testing.T) {
 	l := HowardCycle(1000, Free)
 	for _, bad := range []float64{-1, math.NaN(), math.Inf(1)} {

@@ -186,6 +186,9 @@ func TestProbabilityOfNothing(t *testing.T) {
 	p, err = e.Probability(func(in, out []float64) bool { return in[0] < 0.25 && in[0] == out[0] })
 	require.NoError(t, err)
 	require.Equal(t, 0.25, p.Value)
+	// Wilson's interval for 25 of 100: 0.1755 to 0.3430.
+	require.InDelta(t, 0.1755, p.Low, 5e-5)
+	require.InDelta(t, 0.3430, p.High, 5e-5)
 }
 
 func TestWorkersDoNotChangeBits(t *testing.T) {
@@ -340,6 +343,8 @@ func TestErrorsNameTheField(t *testing.T) {
 	check("outputs", in, nil, f, nil)
 	check("outputs[1]", in, []string{"y", "y"}, f, nil)
 	check("function", in, out, nil, nil)
+	_, err := Run(ctx, in, out, f, &Settings{Samples: 10})
+	require.NoError(t, err)
 	check("Settings.Samples", in, out, f, &Settings{Samples: 9})
 	check("Settings.Workers", in, out, f, &Settings{Workers: -1})
 	check("Settings.Failures", in, out, f, &Settings{Failures: 1})

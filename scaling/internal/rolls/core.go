@@ -82,18 +82,20 @@ func Free(a float64) (Core, error) {
 	plate := product(e.across(1, a), vorticity)
 	return Core{
 		PlateTime: a * e.integral(plate), PlumeTime: e.integral(speed),
-		MeanSquareSpeed: e.meanSquareSpeed(vorticity, a),
+		MeanSquareSpeed: e.meanSquareSpeed(vorticity, a, lastMode),
 	}, nil
 }
+
+// lastMode leaves an error of about 1e-7.
+const lastMode = 61
 
 // meanSquareSpeed returns ⟨|u|²⟩ = ⟨ψω⟩ of a roll of width a between free plates.
 // A sine mode of the plume vorticity with amplitude w and q = ka/2 adds
 //
 //	w²/(8ak³) [tanh q + q (2q tanh q - 1)/cosh²q].
 //
-// The amplitudes fall like n^(-1/2), which closes the sum.
-func (e *edge) meanSquareSpeed(vorticity []float64, a float64) float64 {
-	const last = 61
+// The amplitudes fall like n^(-1/2), which closes the sum after the last mode.
+func (e *edge) meanSquareSpeed(vorticity []float64, a float64, last int) float64 {
 	sum, term := 0.0, 0.0
 	t, f := e.refined(vorticity, 10)
 	for n := 1; n <= last; n += 2 {
@@ -108,7 +110,7 @@ func (e *edge) meanSquareSpeed(vorticity []float64, a float64) float64 {
 		term = amplitude * amplitude / (8 * a * k * k * k) * (math.Tanh(q) + q*(2*q*math.Tanh(q)-1)*sech*sech)
 		sum += term
 	}
-	return sum + term*last/6
+	return sum + term*float64(last)/6
 }
 
 // Rigid returns the viscous core between no-slip plates at infinite Prandtl
