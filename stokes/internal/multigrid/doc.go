@@ -27,7 +27,8 @@
 // coarse grid. Only the thinnest cells are coarsened, which spares flat and
 // graded grids line relaxation. Coarsening ends on a few cells or, where the
 // viscosity jumps, while stiff bodies are still resolved; that level is solved
-// by elimination. The cycle is F(1,1); the Krylov method is generalised
+// by elimination. Faces at the surface of a stiff body interpolate from inside
+// the body, not from across its surface. The cycle is F(1,1); the Krylov method is generalised
 // conjugate residuals (Eisenstat, Elman & Schultz 1983) in a norm of
 // dissipations, with two passes over memory an iteration. Where the viscosity is
 // smooth, its first direction is that of full multigrid with cubic

@@ -24,7 +24,6 @@ func (h *Hierarchy) makeFull() {
 				}
 			}
 		}
-		l.passes.load = rows(c.Z.N, func(_, J int) { l.restrictLoad(c, J) })
 		l.passes.interpolate = rows(l.Z.N, func(member, j int) { l.interpolate(c, h.s[member].wide, j) })
 	}
 }

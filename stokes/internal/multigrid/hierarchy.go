@@ -87,7 +87,18 @@ func (h *Hierarchy) Refresh() {
 		l.findJumps()
 	}
 	h.endOn(h.lastLevel())
+	h.findGrafts()
 	h.direct[h.end].factor()
+}
+
+// findGrafts does so on all levels, if the viscosity jumps on the finest.
+func (h *Hierarchy) findGrafts() {
+	for k, l := range h.Levels[:len(h.Levels)-1] {
+		l.grafts.clear()
+		if k < h.end && h.Finest().jumps.sharp() && !l.jumps.none() {
+			l.findGrafts(h.Levels[k+1])
+		}
+	}
 }
 
 // endOn makes level k the one that is solved directly.
@@ -193,7 +204,7 @@ func (h *Hierarchy) down(k int, all, smooth *pipeline) {
 	h.relaxJumps(k)
 	l.passes.sweep.run()
 	h.relaxJumps(k)
-	l.passes.restrict.run()
+	h.restrictGrafted(k)
 }
 
 // up takes the correction from the level below level k and smooths.
@@ -208,7 +219,7 @@ func (h *Hierarchy) up(k int) {
 		l.passes.up.run()
 		return
 	}
-	l.passes.prolong.run()
+	h.prolongGrafted(k)
 	h.relaxJumps(k)
 	l.passes.sweep.run()
 	h.relaxJumps(k)

@@ -16,7 +16,8 @@ type Level struct {
 	u Fields // correction
 	f Fields // right-hand side
 
-	jumps jumps // cells near jumps of viscosity
+	jumps  jumps  // cells near jumps of viscosity
+	grafts grafts // faces of stiff bodies beside weak ones
 
 	mx, mz *merge  // to the next coarser level; nil on the coarsest
 	cx, cz *cubics // from the next coarser level; nil until they are needed

@@ -13,7 +13,10 @@ type passes struct {
 	fresh, sweep, restrict, prolong *pipeline
 	upStages                        []stage
 
-	load, interpolate func(member int) // of full multigrid; nil until it is needed
+	load        func(member int) // restriction of the right-hand side alone
+	interpolate func(member int) // of full multigrid; nil until it is needed
+
+	residual, correct func(member int) // of grafts
 }
 
 // sweepStages are the distributive sweep. The lags and leads follow from what
@@ -52,6 +55,19 @@ func (l *Level) makePasses(t *team.Team, blocks int, c *Level, s []*scratch) {
 	}
 	l.passes.refresh = append(l.passes.refresh,
 		rows(c.Z.N+1, func(lo, hi int) { l.coarsenViscosity(c, lo, hi) }))
+
+	l.passes.load = rows(c.Z.N, func(lo, hi int) {
+		for J := lo; J < hi; J++ {
+			l.restrictLoad(c, J)
+		}
+	})
+	l.passes.correct = rows(l.Z.N, l.addSpare)
+	l.passes.residual = func(member int) {
+		if member < blocks {
+			lo, hi := team.Block(l.Z.N, member, blocks)
+			l.keepResidual(s[member], lo+1, hi+1)
+		}
+	}
 
 	sweep := l.sweepStages()
 	fresh := append([]stage{{func(_, j int) { l.startX(j) }, 0, 0}}, sweep[1:]...)

@@ -23,8 +23,8 @@ func TestIterations(t *testing.T) {
 		{"weak circles", circles(1e-3), 64, 10},
 		{"weaker circles", circles(1e-6), 64, 13},
 		{"stiff circles", circles(1e3), 64, 12},
-		{"stiffer circles", circles(1e4), 64, 15},
-		{"stiffest circles", circles(1e6), 128, 42},
+		{"stiffer circles", circles(1e4), 64, 13},
+		{"stiffest circles", circles(1e6), 128, 20},
 	} {
 		n, norms := newProblem(square(tt.n), tt.eta).solve(t)
 		t.Logf("%s: %d iterations, weighted %.1e, momentum %.1e", tt.name, n, norms.Weighted, norms.Momentum)
