@@ -138,8 +138,10 @@ func (c Cell) Balance(ra float64) (Balance, error) {
 	if c.Core != InviscidCore {
 		b.RMSStress = stress * math.Pow(amplitude, 1/n)
 	}
-	_, err = check.Result(pkg, "balance at this Rayleigh number", b.Dissipation+b.SurfaceSpeed+b.ResidenceTime+b.EdgeStress)
-	return b, err
+	if _, err := check.Result(pkg, "balance at this Rayleigh number", b.Dissipation+b.SurfaceSpeed+b.ResidenceTime+b.EdgeStress); err != nil {
+		return Balance{}, err
+	}
+	return b, nil
 }
 
 // ninetyPercent is 2 erf⁻¹(0.9): the 0.9 isotherm of a half-space is at this

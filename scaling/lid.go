@@ -99,7 +99,10 @@ func MarginalLid(drop, rd float64) (LidLaw, error) {
 		return LidLaw{}, err
 	}
 	s := LidLaw{Prefactor: math.Pow(drop, 4./3) / math.Cbrt(rd), Drop: drop}
-	return s, s.Check()
+	if err := s.Check(); err != nil {
+		return LidLaw{}, err
+	}
+	return s, nil
 }
 
 // CriticalRayleigh returns the local critical Rayleigh number that the two

@@ -47,8 +47,10 @@ func ConduitOf(l boussinesq.Layer, radius units.Length, excess units.Temperature
 		VolumeFlux: q, MassFlux: lighter * q,
 		HeatFlux: units.Power(float64(m.Density) * float64(m.SpecificHeat) * float64(excess) * q),
 	}
-	_, err = check.Result(pkg, "heat flux of the conduit", c.HeatFlux)
-	return c, err
+	if _, err := check.Result(pkg, "heat flux of the conduit", c.HeatFlux); err != nil {
+		return Conduit{}, err
+	}
+	return c, nil
 }
 
 // ConduitCarrying returns the conduit that carries a buoyancy flux, in kg/s: the
@@ -115,8 +117,10 @@ func StartingPlume(l boussinesq.Layer, q float64, excess units.TemperatureDiffer
 		Time: t, Diameter: units.Length(2 * a), Height: units.Length(b * rise), Speed: units.Velocity(b * end / a),
 		Excess: excess * units.TemperatureDifference(q*end/volume),
 	}
-	_, err = check.Result(pkg, "plume head", float64(h.Height)+float64(h.Diameter))
-	return h, err
+	if _, err := check.Result(pkg, "plume head", float64(h.Height)+float64(h.Diameter)); err != nil {
+		return Head{}, err
+	}
+	return h, nil
 }
 
 // growHead returns the volume of a plume head at time t and ∫ t/a dt, for

@@ -114,8 +114,10 @@ func (m *Model) sample(t units.Time, y []float64) (Sample, error) {
 	if below != 0 {
 		s.Urey = made / below
 	}
-	_, err := check.Result(pkg, "sample", float64(s.Flow[n-1])+s.Urey)
-	return s, err
+	if _, err := check.Result(pkg, "sample", float64(s.Flow[n-1])+s.Urey); err != nil {
+		return Sample{}, err
+	}
+	return s, nil
 }
 
 // Budget says where the heat went between two times.
