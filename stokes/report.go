@@ -39,7 +39,7 @@ func (r Report) String() string {
 // ErrNotConverged reports that Solve stopped short of the tolerance. The
 // error that wraps it is a [*ConvergenceError]. Usual causes, and cures:
 //
-//   - sharp, unaligned bodies more than 1e5 times stiffer than their
+//   - sharp, unaligned bodies more than 1e6 times stiffer than their
 //     surroundings: more MaxIterations and MaxBasis, or a smoother viscosity;
 //   - a tolerance below what rounding allows: the history then ends in a
 //     plateau near 1e-12.
