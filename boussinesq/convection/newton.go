@@ -189,6 +189,33 @@ func (n *newton) nextShift(shift, size, before float64) float64 {
 	return next
 }
 
+// growth estimates how fast the flow of a temperature changes it, per diffusion
+// time of the layer: the rate that advection adds over the departure from the
+// horizontal mean. Zero where nothing flows.
+func (n *newton) growth(ctx context.Context, t *staggered.Scalar) (float64, error) {
+	n.temperature = t
+	if err := n.evaluate(ctx, t, n.flow); err != nil {
+		return 0, err
+	}
+	if err := n.sys.heat.RateTo(n.resting, t, nil); err != nil {
+		return 0, fmt.Errorf("convection: %w", err)
+	}
+	floats.SubTo(n.trial.Values, n.rate.Values, n.resting.Values)
+	added := n.trial.RMS()
+	means := t.HorizontalMeans(nil)
+	for k, mean := range means {
+		row, departure := t.Row(k), n.trial.Row(k)
+		for i, v := range row {
+			departure[i] = v - mean
+		}
+	}
+	size := n.trial.RMS()
+	if added == 0 || size == 0 {
+		return 0, nil
+	}
+	return added / (n.sys.HeatCapacity * size * n.sys.rate()), nil
+}
+
 // evaluate solves for the flow of a temperature and stores R in n.rate.
 func (n *newton) evaluate(ctx context.Context, t *staggered.Scalar, flow *staggered.Flow) error {
 	if _, err := n.sys.solveFlow(ctx, t, flow); err != nil {

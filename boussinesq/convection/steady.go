@@ -124,8 +124,9 @@ func (s *SteadySettings) withDefaults() (SteadySettings, error) {
 // Starting from the initial state it steps in time on a coarse grid, made of
 // every second, fourth, ... node of the problem's. The steps are implicit, short
 // while convection grows and longer as the state calms down, until they are
-// Newton steps (pseudo-transient continuation, Kelley & Keyes 1998). Then it
-// follows the solution from grid to grid. Where a layer has several steady
+// Newton steps (pseudo-transient continuation, Kelley & Keyes 1998). Far above
+// onset the Rayleigh number climbs to its value in stages. Then it follows the
+// solution from grid to grid. Where a layer has several steady
 // states, Problem.Initial decides: the damping of long steps favours a state of
 // as many rolls as it has. A layer that does not convect is found at rest.
 // Whether the state is stable in time is not asked.
@@ -216,17 +217,70 @@ func everySecond(nodes []float64) []float64 {
 
 // steadyOn solves on one grid, from a guess or else from the initial state.
 func steadyOn(ctx context.Context, p Problem, s SteadySettings, guess *staggered.Scalar) (*Solution, error) {
-	sys, err := newSystem(p, Settings{Stokes: s.Stokes, Heat: &heat.Settings{Advection: heat.Central, Workers: s.Workers}})
+	if guess == nil {
+		return climb(ctx, p, s)
+	}
+	n, err := newNewtonOn(p, s)
 	if err != nil {
 		return nil, err
 	}
-	var t *staggered.Scalar
-	if guess == nil {
-		t, err = sys.start(ctx)
-	} else if err = sys.checkGiven("SteadySettings.Guess", guess); err == nil {
-		t = staggered.NewScalar(p.Grid)
-		transfer(t, guess)
+	if err := n.sys.checkGiven("SteadySettings.Guess", guess); err != nil {
+		return nil, err
 	}
+	t := staggered.NewScalar(p.Grid)
+	transfer(t, guess)
+	return n.solve(ctx, t, false)
+}
+
+const (
+	// gentle is the growth, per diffusion time, of a start from which no
+	// overturn leads past the steady state: some ten times that of onset.
+	gentle = 200
+	// climbFactor is the largest ratio of one Rayleigh number to the next.
+	climbFactor = 4
+)
+
+// climb solves from the initial state. A layer far above onset would overturn as
+// a whole and forget how it began; so the Rayleigh number starts where the
+// initial state grows gently and climbs to its value, a steady state at each
+// stage the start of the next.
+func climb(ctx context.Context, p Problem, s SteadySettings) (*Solution, error) {
+	n, err := newNewtonOn(p, s)
+	if err != nil {
+		return nil, err
+	}
+	t, err := n.sys.start(ctx)
+	if err != nil {
+		return nil, err
+	}
+	growth, err := n.growth(ctx, t)
+	if err != nil {
+		return nil, err
+	}
+	state := t.Clone()
+	for share := min(1, gentle/growth); share < 1; share *= climbFactor {
+		stage := p
+		stage.Rayleigh *= share
+		lower, err := newNewtonOn(stage, s)
+		if err != nil {
+			return nil, err
+		}
+		sol, err := lower.solve(ctx, state, true)
+		if ctx.Err() != nil {
+			return sol, err
+		}
+		// A stage without a steady state is no loss: its last state is as good
+		// a start as any. A stage at rest is none.
+		if err != nil || sol.atRest(&stage) {
+			copy(state.Values, t.Values)
+		}
+	}
+	return n.solve(ctx, state, true)
+}
+
+// newNewtonOn returns the search for a steady state of p on its grid.
+func newNewtonOn(p Problem, s SteadySettings) (*newton, error) {
+	sys, err := newSystem(p, Settings{Stokes: s.Stokes, Heat: &heat.Settings{Advection: heat.Central, Workers: s.Workers}})
 	if err != nil {
 		return nil, err
 	}
@@ -234,9 +288,5 @@ func steadyOn(ctx context.Context, p Problem, s SteadySettings, guess *staggered
 		// No wall determines the temperature: there is no one steady state.
 		return nil, fmt.Errorf("convection: %w", err)
 	}
-	n, err := newNewton(sys, s)
-	if err != nil {
-		return nil, err
-	}
-	return n.solve(ctx, t, guess == nil)
+	return newNewton(sys, s)
 }
