@@ -171,11 +171,10 @@ func (p Plate) age(field string, value float64, f func(series) float64) (units.T
 	unit := float64(p.BaseDepth) * float64(p.BaseDepth) / diffusivity(p.Material)
 	peclet := p.shape(0).peclet
 	at := func(lnTau float64) float64 { return f(series{math.Exp(lnTau), peclet}) }
-	oldest := 4.0 // κt/a²: exp(-π²·4) is below round-off
-	youngest := 1e-16
-	if s := (series{youngest, peclet}); s.check() != nil {
-		youngest = s.youngest()
-		oldest = math.Max(oldest, 40/(math.Hypot(peclet, math.Pi)-peclet)/(2*peclet))
+	plate := series{peclet: peclet}
+	youngest, oldest := 1e-16, plate.oldest()
+	if plate.alongPlate() {
+		youngest = plate.youngest()
 	}
 	x, err := root.Find(at, math.Log(youngest), math.Log(oldest), 0)
 	if err != nil {

@@ -49,6 +49,12 @@ func (s series) youngest() float64 {
 	return negligible / unit.decay(maxTerms)
 }
 
+// oldest returns a time at which nothing of the start is left.
+func (s series) oldest() float64 {
+	unit := series{1, s.peclet}
+	return negligible / unit.decay(1)
+}
+
 // early reports whether images converge faster than the series.
 func (s series) early() bool { return s.tau < 0.1 && !s.alongPlate() }
 
@@ -117,9 +123,6 @@ func (s series) contraction() float64 {
 	sum := 0.0
 	for n := 1.0; ; n += 2 {
 		decay := s.decay(n)
-		if decay > negligible && n > 1 {
-			return 0.5 - 4/(math.Pi*math.Pi)*sum
-		}
 		sum += math.Exp(-decay) / (n * n)
 		if decay > negligible {
 			return 0.5 - 4/(math.Pi*math.Pi)*sum
