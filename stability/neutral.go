@@ -90,10 +90,23 @@ func (q *question) stationaryMinimum() (answer, error) {
 	if found.value < best.value {
 		return found, err
 	}
-	if math.IsInf(best.value, 1) {
-		return best, &NoOnsetError{Number: q.number, Wavenumber: s.interval()}
+	if !math.IsInf(best.value, 1) {
+		return best, nil
 	}
-	return best, nil
+	if left := s.samples[0]; !left.missing() && left.value <= s.smallest() {
+		return q.longWaveEdge(left)
+	}
+	return best, &NoOnsetError{Number: q.number, Wavenumber: s.interval()}
+}
+
+// longWaveEdge stands in for the limit k → 0 where the system is singular there:
+// the neutral value at the smallest wavenumber, whose distance from the limit
+// goes into the error.
+func (q *question) longWaveEdge(left sample) (answer, error) {
+	a, err := q.stationaryNeutral(left.k)
+	a.valueError += math.Abs(a.Slope) * a.K
+	a.K = 0
+	return a, err
 }
 
 // stationarySearch is the search for the minimum at k > 0.
@@ -118,13 +131,13 @@ func (q *question) longWaveMinimum() (answer, error) {
 		return no, err
 	}
 	found, err := q.refine(q.still, q.curve(pencil.Marginal), q.point(0, values[q.order]), 0, 0, 0)
-	if err != nil && !errors.Is(err, ErrNotConverged) {
-		return no, err
+	if errors.Is(err, pencil.ErrDiverged) { // no mean gradient: the limit is infinite
+		return no, nil
 	}
 	if found.Curvature <= 0 {
 		return no, nil
 	}
-	return found, nil
+	return found, err
 }
 
 // stationaryNeutral returns the stationary neutral state at a wavenumber, to

@@ -17,15 +17,22 @@ const (
 	// hopfWidth is the relative width to which the onset of an oscillation is
 	// bracketed before Newton's method takes over.
 	hopfWidth = 1e-3
-	// hopfReach is how far above the largest value of interest, and hopfDecades
-	// how many powers of ten above the smallest bound, oscillations are
-	// looked for where no stationary onset sets a limit.
-	hopfReach   = 3
+	// hopfReach is the step by which the value up to which oscillations are
+	// looked for is lowered.
+	hopfReach = 3
+	// hopfMargin widens that limit, so that the neutral curve is seen on both
+	// sides of its minimum.
+	hopfMargin = 1.5
+	// hopfDecades is how many powers of ten above the smallest bound
+	// oscillations are looked for where no stationary onset sets a limit.
 	hopfDecades = 5
 	// certainGrowth is the size of a rate, relative to k² + |σ|, from which it
 	// is not round-off.
 	certainGrowth = 1e-9
 )
+
+// checkLevel is the level of the moving ladder on which growth is looked for.
+const checkLevel = 1
 
 // fastestOf returns the fastest growth rate at a value of the number, of all
 // disturbances or of those that oscillate; zero if none grows.
@@ -62,16 +69,45 @@ func (g *growing) confirms(k float64, sigma complex128, level int) bool {
 }
 
 // oscillation computes the smallest value of the number up to a limit at which
-// a neutral oscillation of wavenumber k exists, to some digits.
+// a neutral oscillation of wavenumber k exists, to some digits: on a coarse level,
+// then following it up to one that resolves it.
 func (q *question) oscillation(k, limit float64) (sample, error) {
-	for i := 0; ; i++ {
-		s, tail, err := q.oscillationAt(k, limit, i)
-		if err != nil || tail < coarseTail || q.moving.size(i+1) > q.maxUnknowns {
-			return s, err
+	const drift = 2 // by which a finer level may change the value
+	at, tail, err := q.oscillationAt(k, limit, checkLevel)
+	for i := checkLevel; err == nil && !at.missing() && tail >= coarseTail && q.moving.size(i+1) <= q.maxUnknowns; i++ {
+		finer, ok := q.neutralOscillation(at, at.value/drift, at.value*drift, i+1)
+		if !ok {
+			at, tail, err = q.oscillationAt(k, limit, i+1)
+			continue
 		}
+		at, tail = finer, q.moving.level(i+1).tail()
 	}
+	if err != nil || at.level == checkLevel || at.missing() {
+		return at, err
+	}
+	first, err := q.nothingBelow(at)
+	if err != nil || first {
+		return at, err
+	}
+	at, _, err = q.oscillationAt(k, limit, at.level)
+	return at, err
 }
 
+// justBelow is how close below a neutral value growth is looked for.
+const justBelow = 1 - 1e-6
+
+// nothingBelow reports whether nothing grows just below a neutral value.
+func (q *question) nothingBelow(at sample) (bool, error) {
+	still, err := q.stationaryBelow(at.k, at.level)
+	if err != nil {
+		return false, err
+	}
+	other, err := q.fastestOf(at.k, at.value*justBelow, at.level, at.value*justBelow > still)
+	return other == 0, err
+}
+
+// oscillationAt does the search on one level, and returns how far the solution
+// has decayed.
 func (q *question) oscillationAt(k, limit float64, level int) (sample, float64, error) {
 	calm := q.bound.lower(k, q.number, q.fixed)
 	if calm >= limit {
@@ -86,22 +122,22 @@ func (q *question) oscillationAt(k, limit float64, level int) (sample, float64, 
 		return none(k), 0, err
 	}
 	calm = max(calm, wild/hopfRatio)
-	lv := q.moving.level(level)
-	for {
+	for try := true; ; {
 		// Newton's method from the growing mode, then a look just below: if
 		// something grows there, another mode was first.
-		if at, ok := q.neutralOscillation(k, wild, sigma, calm, level); ok {
-			tail := lv.tail()
-			below := at.value * (1 - 1e-6)
-			other, err := q.fastestOf(k, below, level, below > still)
-			if err != nil || other == 0 {
-				return at, tail, err
+		if try {
+			guess := sample{k: k, value: wild, omega: imag(sigma), slope: math.NaN(), level: level}
+			if at, ok := q.neutralOscillation(guess, calm, wild, level); ok {
+				tail := q.moving.level(level).tail()
+				other, err := q.fastestOf(k, at.value*justBelow, level, at.value*justBelow > still)
+				if err != nil || other == 0 {
+					return at, tail, err
+				}
+				wild, sigma = at.value*justBelow, other
 			}
-			wild, sigma = below, other
-			continue
-		}
-		if wild-calm <= hopfWidth*wild {
-			return sample{k: k, value: wild, omega: imag(sigma), slope: math.NaN(), level: level}, 0, nil
+			if wild-calm <= hopfWidth*wild {
+				return guess, 0, nil
+			}
 		}
 		m := (calm + wild) / 2
 		at, err := q.fastestOf(k, m, level, m > still)
@@ -113,23 +149,24 @@ func (q *question) oscillationAt(k, limit float64, level int) (sample, float64, 
 		} else {
 			wild, sigma = m, at
 		}
+		try = at != 0 || wild-calm <= hopfWidth*wild
 	}
 }
 
-// neutralOscillation follows a mode that grows at a value to where it is neutral,
-// if that is between a value where nothing grows and this one.
-func (q *question) neutralOscillation(k, wild float64, sigma complex128, calm float64, level int) (sample, bool) {
-	if imag(sigma) == 0 {
+// neutralOscillation follows a mode to where it is neutral, if that is between
+// two values of the number.
+func (q *question) neutralOscillation(at sample, lo, hi float64, level int) (sample, bool) {
+	if at.omega == 0 {
 		return sample{}, false
 	}
-	pt := q.point(k, wild)
-	pt.Sigma = complex(0, imag(sigma))
+	pt := q.point(at.k, at.value)
+	pt.Sigma = complex(0, at.omega)
 	s, err := q.moving.level(level).work.Solve(q.curve(pencil.MarginalOscillation), pt)
 	value := s.Drive[driveOf(q.number)]
-	if err != nil || !(value > calm && value <= wild*(1+hopfWidth) && imag(s.Sigma) > 0) {
+	if err != nil || !(value > lo && value <= hi && imag(s.Sigma) > 0) {
 		return sample{}, false
 	}
-	return sample{k: k, value: value, omega: imag(s.Sigma), slope: s.Slope, level: level}, true
+	return sample{k: at.k, value: value, omega: imag(s.Sigma), slope: s.Slope, level: level}, true
 }
 
 // stationaryBelow returns the stationary neutral value at a wavenumber, or +Inf.
@@ -222,9 +259,6 @@ func (q *question) anythingGrows(value float64, level int) (bool, error) {
 	return false, nil
 }
 
-// checkLevel is the level of the moving ladder that the checks for growth use.
-const checkLevel = 1
-
 // first finds what happens first as the number grows: the stationary onset, or
 // an oscillation before it.
 func (q *question) first() (answer, error) {
@@ -245,7 +279,17 @@ func (q *question) first() (answer, error) {
 	} else if grows, growErr := q.anythingGrows(limit*(1-1e-6), checkLevel); growErr != nil || !grows {
 		return still, errors.Join(err, growErr)
 	}
-	moving, movingErr := q.oscillatoryMinimum(hopfReach * limit)
+	for { // a lower limit makes the search shorter
+		grows, err := q.anythingGrows(limit/hopfReach, checkLevel)
+		if err != nil {
+			return still, err
+		}
+		if !grows {
+			break
+		}
+		limit /= hopfReach
+	}
+	moving, movingErr := q.oscillatoryMinimum(hopfMargin * limit)
 	if movingErr == nil && moving.value < still.value {
 		return moving, nil
 	}

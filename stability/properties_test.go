@@ -405,8 +405,57 @@ func TestBottomlessPorousLayer(t *testing.T) {
 	assert.InEpsilon(t, 0.01, n.Rayleigh, 1e-12) // w and θ uniform: Ra = k²
 }
 
-// Rotation acts on a porous layer's fluid alike in no way that is modelled here,
-// so the two exclude each other; a jump of viscosity that is not listed is found.
+// Long waves are found where the equations are regular at zero wavenumber, and
+// where they are not: with free boundaries, rotation and conducting walls.
+func TestLongWavesWithRotationAndField(t *testing.T) {
+	walls := []MagneticWall{Insulating, Conducting, VerticalField}
+	for _, w := range []Wall{Free, Rigid} {
+		var values []float64
+		for _, bottom := range walls {
+			for _, top := range walls {
+				o := critical(t, Layer{
+					Bottom: w.FixedFlux(), Top: w.FixedFlux(), Taylor: 5,
+					Magnetic: Magnetic{Chandrasekhar: 3, Bottom: bottom, Top: top},
+				})
+				assert.True(t, o.LongWave(), "%v, %v, %v", w, bottom, top)
+				values = append(values, o.Value)
+			}
+		}
+		// At k → 0 the currents of rolls do not reach the walls.
+		for _, v := range values {
+			assert.InEpsilon(t, values[0], v, 0.2)
+		}
+		plain := critical(t, Layer{Bottom: w.FixedFlux(), Top: w.FixedFlux()})
+		assert.Greater(t, values[0], plain.Value)
+	}
+	// A gradient without a mean has no long waves.
+	flux := Free.FixedFlux()
+	assert.False(t, critical(t, Layer{Bottom: flux, Top: flux, Base: InternalHeatingBetween()}).LongWave())
+}
+
+// Modes that other fields than the temperature make up alone are resolved as
+// well: here a uniform magnetic field that decays by diffusion.
+func TestDecayOfAUniformField(t *testing.T) {
+	l := Layer{
+		Bottom: Free.FixedFlux(), Top: Free.FixedFlux(), Prandtl: 7,
+		Magnetic: Magnetic{Chandrasekhar: 9, Diffusivity: 0.1, Bottom: VerticalField, Top: VerticalField},
+	}
+	g, err := l.Growth(1, 0.8)
+	require.NoError(t, err)
+	assert.InEpsilon(t, -0.1*0.64, g.Rate, 1e-12)
+}
+
+// At infinite Prandtl number and finite magnetic diffusivity, the equations of
+// motion have a mass matrix without an inertia: no growth rate is infinite.
+func TestInductionWithoutInertia(t *testing.T) {
+	l := Layer{Bottom: Rigid, Base: MixedHeating(3), Magnetic: Magnetic{Chandrasekhar: 50, Diffusivity: 0.1}}
+	o := critical(t, l)
+	g, err := l.Growth(o.Rayleigh, o.Wavenumber)
+	require.NoError(t, err)
+	assert.InDelta(t, 0, g.Rate, 1e-9)
+}
+
+// A jump of viscosity and a kink of the gradient that are not listed are found.
 func TestUnlistedJump(t *testing.T) {
 	step := func(z, _ float64) float64 {
 		if z < 0.37 {

@@ -253,7 +253,8 @@ func (s *system) addSolute(l *Layer, still bool) {
 		}
 	}
 	f.Constant = f.Fixed == [2]int{}
-	f.Weighted = still && f.Constant
+	f.Weighted = still && f.Constant && !s.fields[s.velocity].Weighted
+	s.irregular = f.Constant && !f.Weighted
 	s.solute = s.field(f)
 	s.diffusion(s.solute, 0, l.Solute.Diffusivity, 1)
 	gradient := s.coefficient(l.Solute.Gradient)
@@ -318,8 +319,8 @@ func (s *system) addCurrent(walls [2]MagneticWall, root, q float64) {
 		s.add(integral{pencil.Base, 0, s.vorticity, s.current, 0}, 1, 0, root)
 	} else {
 		s.add(integral{pencil.Base, 0, s.vorticity, s.current, 0}, 0, 1, -root)
+		s.irregular = s.irregular || s.fields[s.vorticity].Weighted || s.still && f.Constant
 		s.fields[s.vorticity].Weighted = false
-		s.irregular = true
 	}
 	s.add(integral{pencil.Base, 0, s.current, s.vorticity, 0}, 0, 1, -root)
 }

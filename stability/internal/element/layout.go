@@ -154,25 +154,36 @@ func (l *Layout) NodeValue(field, node int) int {
 	return s.index[(node-1)*s.local+1+int(l.Fields[field].Class)]
 }
 
+// significant is the size, relative to the largest field, below which the
+// coefficients of a field are not judged by themselves: they may be round-off.
+const significant = 1e-4
+
 // Tail measures on each element how far the coefficients have decayed: the
 // largest of the last two bubbles of any field, relative to the largest
 // coefficient of that field anywhere. It writes into dst, one number an element.
+// The coefficients should be scaled so that those of all fields are comparable.
 func (l *Layout) Tail(dst, coefficients []float64) {
 	clear(dst)
+	overall := largest(coefficients[:l.size])
+	if overall == 0 {
+		return
+	}
 	for f := range l.Fields {
 		s := &l.spans[f]
-		largest := 0.0
-		for _, v := range coefficients[s.offset : s.offset+s.count] {
-			largest = max(largest, v, -v)
-		}
-		if largest == 0 {
-			continue
-		}
+		size := max(largest(coefficients[s.offset:s.offset+s.count]), significant*overall)
 		for e := range dst {
 			for n := l.Degree - 1; n <= l.Degree; n++ {
 				v := coefficients[s.index[e*s.local+n]]
-				dst[e] = max(dst[e], v/largest, -v/largest)
+				dst[e] = max(dst[e], v/size, -v/size)
 			}
 		}
 	}
+}
+
+func largest(v []float64) float64 {
+	m := 0.0
+	for _, x := range v {
+		m = max(m, x, -x)
+	}
+	return m
 }

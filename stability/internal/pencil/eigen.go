@@ -181,8 +181,17 @@ func (w *Workspace) eigenvalues() ([]complex128, error) {
 
 // zeroEigenvalue is the size, relative to the largest one, under which an
 // eigenvalue of a reduced matrix is taken for the zero that it would be in
-// exact arithmetic.
+// exact arithmetic: an infinite driving number or growth rate.
 const zeroEigenvalue = 1e-13
+
+// largestSize returns the size of the largest eigenvalue.
+func largestSize(found []complex128) float64 {
+	largest := 0.0
+	for _, mu := range found {
+		largest = max(largest, math.Hypot(real(mu), imag(mu)))
+	}
+	return largest
+}
 
 // DriveEigenvalues returns the positive real values of a driving number at
 // which J is singular, in increasing order; the point's own value of that number
@@ -198,10 +207,7 @@ func (w *Workspace) DriveEigenvalues(pt Point, drive int) ([]float64, error) {
 	if err != nil {
 		return nil, err
 	}
-	largest := 0.0
-	for _, mu := range found {
-		largest = max(largest, math.Hypot(real(mu), imag(mu)))
-	}
+	largest := largestSize(found)
 	values := w.eigen.wr[:0]
 	for _, mu := range found {
 		if real(mu) < -zeroEigenvalue*largest && math.Abs(imag(mu)) <= 1e-9*math.Abs(real(mu)) {
@@ -225,9 +231,10 @@ func (w *Workspace) GrowthEigenvalues(pt Point) ([]complex128, error) {
 	if err != nil {
 		return nil, err
 	}
+	largest := largestSize(found)
 	values := found[:0]
 	for _, mu := range found {
-		if mu != 0 {
+		if math.Hypot(real(mu), imag(mu)) > zeroEigenvalue*largest {
 			values = append(values, pt.Sigma+1/mu)
 		}
 	}
