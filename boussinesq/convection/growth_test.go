@@ -18,6 +18,9 @@ import (
 // by shooting in 50-digit arithmetic. The start is not the mode's own shape: the
 // rate is measured once other shapes have decayed.
 func TestModesBetweenRigidWallsGrowAsPredicted(t *testing.T) {
+	if testing.Short() {
+		t.Skip("slow")
+	}
 	both := stokes.Walls{Bottom: stokes.NoSlip, Top: stokes.NoSlip}
 	for _, tt := range []struct {
 		walls        stokes.Walls

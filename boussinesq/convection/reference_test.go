@@ -70,21 +70,21 @@ func steadyCases() []steadyCase {
 	}
 	return []steadyCase{
 		{name: "1a", width: 1, rayleigh: 1e4},
-		{name: "1b", width: 1, rayleigh: 1e5},
+		{name: "1b", width: 1, rayleigh: 1e5, slow: true},
 		{name: "1c", width: 1, rayleigh: 1e6, slow: true},
 		{name: "2a", width: 1, rayleigh: 1e4, problem: convection.Problem{Viscosity: contrast(1000)}, slow: true},
 		{name: "n01", width: 1.5, rayleigh: 3e4, problem: convection.Problem{Initial: half(1 / 1.5)}, slow: true},
 		{name: "n03", width: 1, rayleigh: 5e3, slow: true},
-		{name: "n04", width: 1, rayleigh: 2e4, problem: convection.Problem{Walls: rigid}},
-		{name: "n06", width: 1, rayleigh: 5e4, problem: convection.Problem{Heating: 5}},
+		{name: "n04", width: 1, rayleigh: 2e4, problem: convection.Problem{Walls: rigid}, slow: true},
+		{name: "n06", width: 1, rayleigh: 5e4, problem: convection.Problem{Heating: 5}, slow: true},
 		{name: "n08", width: 1, rayleigh: 2e4, problem: convection.Problem{Viscosity: contrast(50)}, slow: true},
 		{name: "n10", width: 1, rayleigh: 100, problem: convection.Problem{Viscosity: contrast(1e5)}, fine: true},
-		{name: "n12", width: 1, rayleigh: 1e5, problem: convection.Problem{Viscosity: deep}},
+		{name: "n12", width: 1, rayleigh: 1e5, problem: convection.Problem{Viscosity: deep}, slow: true},
 		{name: "n14", width: 2, rayleigh: 2e4, problem: convection.Problem{Initial: half(1)}, slow: true},
 		{name: "n16", width: math.Sqrt2, rayleigh: 700, slow: true},
-		{name: "n18", width: math.Sqrt2, rayleigh: 1000},
-		{name: "n19", width: 1, rayleigh: 2e4, problem: convection.Problem{Thermal: &flux}},
-		{name: "n25", width: 1, rayleigh: 2e4, problem: convection.Problem{Thermal: &heated, Heating: 1}},
+		{name: "n18", width: math.Sqrt2, rayleigh: 1000, slow: true},
+		{name: "n19", width: 1, rayleigh: 2e4, problem: convection.Problem{Thermal: &flux}, slow: true},
+		{name: "n25", width: 1, rayleigh: 2e4, problem: convection.Problem{Thermal: &heated, Heating: 1}, slow: true},
 	}
 }
 
@@ -162,6 +162,9 @@ func TestBenchmarkCasesToManyDigits(t *testing.T) {
 // chance: Nu = 13.0111, 13.5644, 13.7002 on 16, 32 and 64 uniform rows, while
 // the limit is 13.782. The uncertainty must hold it all the same.
 func TestUncertaintyHoldsOnCoarseGrids(t *testing.T) {
+	if testing.Short() {
+		t.Skip("slow")
+	}
 	for _, rows := range []int{32, 64, 128} {
 		g, err := staggered.Uniform(rows, rows, 1, 1)
 		require.NoError(t, err)
@@ -257,6 +260,9 @@ func TestSteadyFromAGuess(t *testing.T) {
 // The search hands over from steps in time to Newton's method: a cold start
 // takes few steps on the coarse grid, and a handful on every finer one.
 func TestSteadyTakesFewSteps(t *testing.T) {
+	if testing.Short() {
+		t.Skip("slow")
+	}
 	steps := map[int]int{}
 	for _, c := range steadyCases() {
 		if c.name != "1b" {

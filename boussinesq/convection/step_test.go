@@ -59,6 +59,9 @@ func difference(a, b *staggered.Scalar) float64 {
 // The steps are short enough that neither stability nor Settings.FlowError nor
 // the growth of the first few shortens them further: all are equal.
 func TestStepsAreSecondOrderInTime(t *testing.T) {
+	if testing.Short() {
+		t.Skip("slow")
+	}
 	for _, tt := range []struct {
 		scheme heat.Scheme
 		steps  int
