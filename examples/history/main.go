@@ -64,7 +64,7 @@ func cool(in, out []float64) error {
 
 func main() {
 	log.SetFlags(0)
-	out := flag.String("out", ".", "folder for history.csv and history.png")
+	out := flag.String("out", "examples/history/out", "folder for history.csv and history.png")
 	samples := flag.Int("samples", 2000, "number of histories")
 	flag.Parse()
 	var names []string
@@ -91,6 +91,7 @@ func main() {
 		}
 		table = append(table, row)
 	}
+	check(os.MkdirAll(*out, 0o755))
 	file, err := os.Create(filepath.Join(*out, "history.csv"))
 	check(err)
 	check(csv.NewWriter(file).WriteAll(table))
@@ -109,6 +110,7 @@ func main() {
 			}
 		}
 	}
+	fmt.Printf("Wrote history.csv and history.png to %s\n", *out)
 }
 
 func check(err error) {
