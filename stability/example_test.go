@@ -63,6 +63,21 @@ func ExampleSolver_Find() {
 	// Ra = 300: Ma = 73.94 at k = 2.231
 }
 
+// A mode is a set of functions of height, times cos kx or sin kx.
+func ExampleMode() {
+	onset, err := stability.Layer{Bottom: stability.Rigid, Top: stability.Rigid}.Critical()
+	if err != nil {
+		log.Fatal(err)
+	}
+	m := onset.Mode
+	for _, z := range []float64{0.25, 0.5} {
+		fmt.Printf("z = %.2f: w = %.3f, θ = %.4f, ψ = %.3f\n", z, m.Velocity(z), m.Temperature(z), m.StreamFunction(z))
+	}
+	// Output:
+	// z = 0.25: w = 0.565, θ = 0.0314, ψ = -0.181
+	// z = 0.50: w = 1.000, θ = 0.0468, ψ = -0.321
+}
+
 // A stable gradient has no onset.
 func ExampleNoOnsetError() {
 	layer := stability.Layer{Base: stability.Gradient(func(z float64) float64 { return -1 - z })}

@@ -510,10 +510,16 @@ func TestAnswersDoNotDependOnHistory(t *testing.T) {
 	assert.Equal(t, math.Float64bits(first.Wavenumber), math.Float64bits(again.Wavenumber))
 	assert.Equal(t, math.Float64bits(first.Mode.Temperature(0.3)), math.Float64bits(again.Mode.Temperature(0.3)))
 
+	stiff := Layer{Viscosity: Exponential(18, 0.5), Taylor: 1e5} // large enough for parallel kernels
+	parallel := critical(t, stiff)
 	defer runtime.GOMAXPROCS(runtime.GOMAXPROCS(1))
 	alone, err := fresh().Critical()
 	require.NoError(t, err)
 	assert.Equal(t, math.Float64bits(first.Rayleigh), math.Float64bits(alone.Rayleigh))
+	serial := critical(t, stiff)
+	require.Greater(t, parallel.Mode.layout.Size(), 200)
+	assert.Equal(t, math.Float64bits(parallel.Rayleigh), math.Float64bits(serial.Rayleigh))
+	assert.Equal(t, math.Float64bits(parallel.Wavenumber), math.Float64bits(serial.Wavenumber))
 }
 
 func TestLayersAreSafeForConcurrentUse(t *testing.T) {

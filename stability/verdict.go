@@ -110,7 +110,9 @@ func duration(t units.Time) string {
 	return fmt.Sprintf("%.3g seconds", t.In(units.Second))
 }
 
-// Judge says whether a layer convects, at which wavelength, and how soon.
+// Judge says whether a layer convects, at which wavelength, and how soon. A
+// layer that stays at rest does so against small disturbances; what else a tank
+// or a vessel of hot fluid needs to be safe, it does not say.
 func Judge(l boussinesq.Layer, c Conditions) (Verdict, error) {
 	p, rayleigh, err := c.pose(l)
 	if err != nil {
