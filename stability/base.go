@@ -3,6 +3,7 @@ package stability
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"example.org/overturn/stability/internal/piecewise"
 )
@@ -107,6 +108,7 @@ type baseState struct {
 	gradient, temperature func(z float64) float64
 	resolved              *piecewise.Function // gradient
 	uniform               bool                // gradient
+	solute                *piecewise.Function // gradient of the solute, nil for 1
 	largest               float64             // |f|, a safe upper bound
 }
 
@@ -134,6 +136,33 @@ func (b Base) resolve() (*baseState, error) {
 	s.uniform = s.resolved.Constant()
 	s.largest = largest(s.resolved)
 	return s, nil
+}
+
+// resolveSolute does the same for the gradient of a solute.
+func (s *baseState) resolveSolute(h func(z float64) float64) error {
+	if h == nil {
+		return nil
+	}
+	var err error
+	if s.solute, err = piecewise.Resolve(h, 0, 1, nil, piecewise.Global); err != nil {
+		return valueError("solute gradient", "finite", err)
+	}
+	return nil
+}
+
+// nodes returns the ends of all panels, and degree the largest degree on any.
+func (s *baseState) nodes() []float64 {
+	if s.solute == nil {
+		return slices.Clone(s.resolved.Nodes)
+	}
+	return slices.Concat(s.resolved.Nodes, s.solute.Nodes)
+}
+
+func (s *baseState) degree() int {
+	if s.solute == nil {
+		return s.resolved.Degree()
+	}
+	return max(s.resolved.Degree(), s.solute.Degree())
 }
 
 // bounding samples a panel closely enough for a bound on a polynomial of its

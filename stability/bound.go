@@ -56,12 +56,12 @@ func newBound(l *Layer, base *baseState, eta *viscosityState) bound {
 	}
 	b.a0, b.a2, b.a4 = b.a0*eta.least, b.a2*eta.least, b.a4*eta.least
 	if l.Solute.Diffusivity > 0 {
-		b.soluteBound(l)
+		b.soluteBound(l, base)
 	}
 	return b
 }
 
-func (b *bound) soluteBound(l *Layer) {
+func (b *bound) soluteBound(l *Layer, base *baseState) {
 	biot := func(w SoluteWall) float64 {
 		if w == FixedConcentration {
 			return math.Inf(1)
@@ -70,16 +70,9 @@ func (b *bound) soluteBound(l *Layer) {
 	}
 	b.solutal = firstEigenvalue(biot(l.Solute.Bottom), biot(l.Solute.Top))
 	h, uniform := 1.0, true
-	if g := l.Solute.Gradient; g != nil {
-		first := g(0)
-		h = math.Abs(first)
-		for i := range 1000 {
-			v := g(float64(i+1) / 1000)
-			uniform = uniform && v == first
-			h = max(h, math.Abs(v))
-		}
-		uniform = uniform && first > 0
-		h *= boundFactor
+	if base.solute != nil {
+		h = largest(base.solute)
+		uniform = base.solute.Constant() && base.solute.At(0) > 0
 	}
 	b.concentration, b.diffusivity, b.weighs = h, l.Solute.Diffusivity, uniform
 }

@@ -231,6 +231,84 @@ func TestFirstOnsetOfRotatingLayers(t *testing.T) {
 	}
 }
 
+// The oscillatory branch is found by name where the stationary one comes first.
+func TestOscillatoryBranchByName(t *testing.T) {
+	const ta, pr = 1e4, 0.66
+	want, at := math.Inf(1), 0.0
+	p2 := math.Pi * math.Pi
+	for k := 0.5; k < 20; k *= 1.0002 {
+		a := p2 + k*k
+		d := ta * p2 * (1/pr - 1) / (a * (1 + 1/pr))
+		omega2 := (d - a*a) * pr * pr
+		if omega2 <= 0 {
+			continue
+		}
+		if ra := (a*(a*a-omega2/pr) + ta*p2*(a*a+omega2/pr)/d) / (k * k); ra < want {
+			want, at = ra, k
+		}
+	}
+	l := Layer{Taylor: ta, Prandtl: pr}
+	o, err := l.Find(Search{Branch: OscillatoryOnset})
+	require.NoError(t, err)
+	assert.True(t, o.Oscillates())
+	assert.InEpsilon(t, want, o.Value, 1e-6)
+	assert.InEpsilon(t, at, o.Wavenumber, 1e-2)
+	stationary, err := l.Find(Search{Branch: StationaryOnset})
+	require.NoError(t, err)
+	first := critical(t, l)
+	assert.Less(t, stationary.Value, o.Value)
+	assert.Equal(t, stationary.Value, first.Value)
+	s, err := NewSolver(l, nil)
+	require.NoError(t, err)
+	n, err := s.Neutral(Search{Branch: OscillatoryOnset}, o.Wavenumber)
+	require.NoError(t, err)
+	assert.InEpsilon(t, o.Value, n.Value, 1e-12)
+}
+
+// A slowly diffusing solute makes thin layers at rigid walls, which the coarse
+// level of the search does not resolve: the answer comes from finer ones.
+func TestThinSoluteLayers(t *testing.T) {
+	l := Layer{Bottom: Rigid, Top: Rigid, Prandtl: 7, Solute: Solute{Rayleigh: 1e5, Diffusivity: 0.003}}
+	s, err := NewSolver(l, nil)
+	require.NoError(t, err)
+	o, err := s.Critical()
+	require.NoError(t, err)
+	require.True(t, o.Oscillates())
+	q, err := s.question(Search{})
+	require.NoError(t, err)
+	rough, err := q.oscillation(o.Wavenumber, 3*o.Value)
+	require.NoError(t, err)
+	assert.Greater(t, rough.level, checkLevel)
+	assert.InEpsilon(t, o.Value, rough.value, 1e-2)
+	for _, d := range []float64{-1e-4, 1e-4} {
+		g, err := s.Growth(o.Value*(1+d), o.Wavenumber)
+		require.NoError(t, err)
+		assert.Positive(t, g.Rate*d)
+		assert.InEpsilon(t, o.Frequency, g.Frequency, 1e-2)
+	}
+}
+
+// A solute whose gradient is a function is one with the number it always gives;
+// where it varies, its part in the buoyancy is that of its mean to first order.
+func TestGradientOfTheSolute(t *testing.T) {
+	layer := func(h func(float64) float64) Layer {
+		return Layer{Bottom: Rigid, Top: Rigid, Prandtl: 7, Solute: Solute{Rayleigh: 300, Diffusivity: 0.5, Gradient: h}}
+	}
+	plain := critical(t, layer(nil))
+	same := critical(t, layer(func(float64) float64 { return 1 }))
+	assert.InEpsilon(t, plain.Value, same.Value, 1e-13)
+	tilted := critical(t, layer(func(z float64) float64 { return 1 + 0.2*(z-0.5) }))
+	assert.InEpsilon(t, plain.Value, tilted.Value, 1e-3)
+	assert.Greater(t, math.Abs(plain.Value-tilted.Value), 1e-6)
+	doubled := critical(t, layer(func(float64) float64 { return 2 }))
+	rigid := critical(t, Layer{Bottom: Rigid, Top: Rigid})
+	assert.InEpsilon(t, 2*(plain.Value-rigid.Value), doubled.Value-rigid.Value, 1e-10)
+	_, err := layer(func(z float64) float64 { return math.NaN() }).Critical()
+	var input *InputError
+	require.ErrorAs(t, err, &input)
+	assert.Equal(t, "solute gradient at z = 0", input.Name)
+}
+
 // At the first onset nothing grows just below, at any wavenumber, and something
 // does just above: for layers whose neutral curves have more than one minimum, or
 // whose onset oscillates.

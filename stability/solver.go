@@ -69,6 +69,9 @@ func NewSolver(l Layer, settings *Settings) (*Solver, error) {
 	if s.base, err = l.Base.resolve(); err != nil {
 		return nil, err
 	}
+	if err := s.base.resolveSolute(l.Solute.Gradient); err != nil {
+		return nil, err
+	}
 	eta, err := l.Viscosity.resolve(s.base, s.base.resolved.Nodes)
 	if err != nil {
 		return nil, err

@@ -155,7 +155,7 @@ func layerSystem(l *Layer, base *baseState, eta *viscosityState, still bool, sca
 		s.magnetic(l, still)
 	}
 	s.nodes = layerNodes(l, base, eta)
-	s.operator.Excess += (max(base.resolved.Degree(), eta.degree()) + 1) / 2
+	s.operator.Excess += (max(base.degree(), eta.degree()) + 1) / 2
 	return s
 }
 
@@ -362,7 +362,7 @@ const sameNode = 1e-9
 // those that resolve boundary layers at the walls: of Ekman with rotation, of
 // Hartmann with a magnetic field.
 func layerNodes(l *Layer, base *baseState, eta *viscosityState) []float64 {
-	nodes := slices.Clone(base.resolved.Nodes)
+	nodes := base.nodes()
 	if eta.resolved != nil {
 		nodes = append(nodes, eta.resolved.Nodes...)
 	}
