@@ -85,8 +85,8 @@ func notEvaluated(l Law, runs []Run) (n int) {
 	return n
 }
 
-// Slope, its error and the intervals of a textbook line: y = 1, 3, 2, 5 at ln x
-// = 0, 1, 2, 3 has slope 1.1, residual sum 2.7 and Sxx = 5, by hand.
+// Slope, its error and the intervals of a line by hand: y = 1, 3, 2, 5 at ln x
+// = 0, 1, 2, 3 has slope 1.1, residual sum 2.7 and Sxx = 5.
 func TestFitAgainstHandCalculation(t *testing.T) {
 	var runs []Run
 	for i, y := range []float64{1, 3, 2, 5} {
