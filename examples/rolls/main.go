@@ -46,7 +46,7 @@ func run(ctx context.Context, out string) error {
 	for _, ra := range []float64{1e4, 3e4, 1e5, 3e5, 1e6} {
 		nu, err := nusselt(ctx, ra)
 		if err != nil {
-			return fmt.Errorf("Ra = %g: %w", ra, err)
+			return fmt.Errorf("at a Rayleigh number of %g: %w", ra, err)
 		}
 		fmt.Printf("  Ra = %-7.0e Nu = %9.5f ± %.5f\n", ra, nu.Value, nu.Uncertainty)
 		runs = append(runs, scaling.Run{Groups: scaling.Groups{Rayleigh: ra, CellWidth: 1}, Value: nu.Value})
