@@ -346,7 +346,7 @@ func (s *system) addInduction(walls [2]MagneticWall, root, q float64) {
 	s.add(integral{pencil.Mass, 0, s.velocity, b, 0}, 1, 0, q*root)
 }
 
-func (b *baseState) unit() bool { return b.uniform && b.gradient(0.5) == 1 }
+func (s *baseState) unit() bool { return s.uniform && s.gradient(0.5) == 1 }
 
 func (s *viscosityState) degree() int {
 	if s.resolved == nil {
