@@ -103,8 +103,8 @@ func LidOnset() Law {
 }
 
 // OgawaLid is the viscosity contrast above which three-dimensional convection
-// heated from below has a stagnant lid, 1.18e3 Ra_top^0.309 (Ogawa, Schubert &
-// Zebib 1991), studied for contrasts up to 1e5.
+// heated from below has a stagnant lid, 1.18e3 Ra_top^0.309 (Ogawa et al.
+// 1991), studied for contrasts up to 1e5.
 func OgawaLid() Law {
 	return Law{
 		Name: "bound of the stagnant lid in 3-D", Formula: "r = 1.18e3 Ra_top^0.309",
@@ -117,7 +117,7 @@ func OgawaLid() Law {
 
 // OgawaBimodal is the viscosity contrast above which whole-layer convection
 // heated from below turns from rolls to three-dimensional bimodal flow,
-// 3.84e6 Ra_top^(-1.35) (Ogawa, Schubert & Zebib 1991).
+// 3.84e6 Ra_top^(-1.35) (Ogawa et al. 1991).
 func OgawaBimodal() Law {
 	l := OgawaLid()
 	l.Name, l.Formula = "bound of bimodal flow in 3-D", "r = 3.84e6 Ra_top^(-1.35)"
