@@ -247,6 +247,7 @@ func TestSurfaces(t *testing.T) {
 	assert.Equal(t, math.Inf(1), top.At(2, 1, 0).FluxX)
 	assert.Equal(t, -math.Inf(1), top.At(2, 1, 0).FluxZ)
 	assert.Equal(t, State{Temperature: 3}, HotTop{Top: 3, Others: 3}.At(0, 1, 0))
+	assert.Equal(t, State{Temperature: 1}, HotTop{Top: 3, Others: 1, Height: 300}.At(0.3, 20, 0), "far below a hot top")
 	leveque := Leveque{Wall: 2, Far: 5, Shear: 3}
 	assert.Equal(t, State{2, 0, -leveque.WallGradient(0.7)}, leveque.At(0.7, 0, 0))
 	assert.Equal(t, State{Temperature: 5}, leveque.At(0, 1, 0))
