@@ -1,6 +1,7 @@
 package stability
 
 import (
+	"cmp"
 	"errors"
 	"fmt"
 	"math"
@@ -167,13 +168,12 @@ func (s *search) scan() error {
 			downDone = down < s.from || s.nothingBeyond(at, best, at.slope < 0)
 		}
 	}
-	slices.SortFunc(s.samples, func(a, b sample) int {
-		if a.k < b.k {
-			return -1
-		}
-		return 1
-	})
+	s.sort()
 	return nil
+}
+
+func (s *search) sort() {
+	slices.SortFunc(s.samples, func(a, b sample) int { return cmp.Compare(a.k, b.k) })
 }
 
 func (s *search) add(k float64, best *float64) (sample, error) {
@@ -253,12 +253,7 @@ func (s *search) inspect() error {
 			return err
 		}
 	}
-	slices.SortFunc(s.samples, func(a, b sample) int {
-		if a.k < b.k {
-			return -1
-		}
-		return 1
-	})
+	s.sort()
 	return nil
 }
 

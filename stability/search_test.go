@@ -1,8 +1,10 @@
 package stability
 
 import (
+	"cmp"
 	"errors"
 	"math"
+	"slices"
 	"testing"
 
 	"github.com/stretchr/testify/assert"
@@ -116,6 +118,120 @@ func TestBoundIsBelowEveryNeutralState(t *testing.T) {
 			assert.Less(t, g.Rate, s.bound.growth(k, s.drives(3*o.Value)), "%v at k = %g", l, k)
 		}
 	}
+}
+
+// curve is a search on a function with its slope, without any bound.
+func curve(value, slope func(k float64) float64) *search {
+	at := func(k float64) (sample, error) { return sample{k: k, value: value(k), slope: slope(k)}, nil }
+	return &search{
+		from: leastWavenumber, sample: at,
+		lower: func(float64) float64 { return math.Inf(-1) },
+		extremum: func(guess sample, lo, hi float64) (answer, error) {
+			return answer{}, errors.New("left to bisection")
+		},
+		point: func(guess sample) (answer, error) {
+			var a answer
+			a.K, a.value = guess.k, value(guess.k)
+			return a, nil
+		},
+	}
+}
+
+// A search without Newton's method and without bounds: two minima of nearly the
+// same depth, a corner where branches cross, a curve with gaps.
+func TestSearchOnFunctions(t *testing.T) {
+	for _, shift := range []float64{-0.01, 0.01} {
+		double := func(k float64) float64 {
+			x := math.Log(k)
+			return 2 + (x-0.5)*(x-0.5)*(x-2.5)*(x-2.5) + shift*x
+		}
+		slope := func(k float64) float64 {
+			x := math.Log(k)
+			return (2*(x-0.5)*(x-2.5)*(2*x-3) + shift) / k
+		}
+		s := curve(double, slope)
+		a, err := s.minimum(math.Inf(1))
+		require.NoError(t, err)
+		want := 0.5
+		if shift < 0 {
+			want = 2.5
+		}
+		assert.InDelta(t, want, math.Log(a.K), 0.01)
+		assert.InDelta(t, 0, slope(a.K), 1e-10)
+		assert.True(t, slices.IsSortedFunc(s.samples, func(a, b sample) int { return cmp.Compare(a.k, b.k) }))
+		assert.Less(t, len(s.samples), 60)
+	}
+
+	corner := curve(
+		func(k float64) float64 { return max(3/k, k*k) },
+		func(k float64) float64 {
+			if 3/k > k*k {
+				return -3 / (k * k)
+			}
+			return 2 * k
+		})
+	a, err := corner.minimum(math.Inf(1))
+	require.NoError(t, err)
+	assert.InEpsilon(t, math.Cbrt(3), a.K, 1e-11)
+	assert.LessOrEqual(t, math.Abs(a.K-math.Cbrt(3)), 2*a.kError)
+
+	gap := curve(
+		func(k float64) float64 {
+			if k < 4 || k > 7 {
+				return math.Inf(1)
+			}
+			return 1 + (k-5)*(k-5)
+		},
+		func(k float64) float64 {
+			if k < 4 || k > 7 {
+				return math.NaN()
+			}
+			return 2 * (k - 5)
+		})
+	a, err = gap.minimum(math.Inf(1))
+	require.NoError(t, err)
+	assert.InEpsilon(t, 5, a.K, 1e-11)
+
+	nothing := curve(func(float64) float64 { return math.Inf(1) }, func(float64) float64 { return math.NaN() })
+	a, err = nothing.minimum(math.Inf(1))
+	require.NoError(t, err)
+	assert.True(t, math.IsInf(a.value, 1))
+	assert.Less(t, nothing.interval()[0], leastWavenumber)
+	assert.Greater(t, nothing.interval()[1], largestWavenumber)
+}
+
+// A bound that is above the best value found spares the wavenumbers beyond.
+func TestSearchStopsAtItsBound(t *testing.T) {
+	s := curve(func(k float64) float64 { return k + 9/k }, func(k float64) float64 { return 1 - 9/(k*k) })
+	s.lower = func(k float64) float64 { return 0.9 * (k + 9/k) }
+	a, err := s.minimum(math.Inf(1))
+	require.NoError(t, err)
+	assert.InEpsilon(t, 3, a.K, 1e-11)
+	assert.Less(t, len(s.samples), 14)
+	assert.Greater(t, s.interval()[0], 1.0)
+	assert.Less(t, s.interval()[1], 9.0)
+	// Errors of samples end it.
+	fail := errors.New("fails")
+	s.sample = func(float64) (sample, error) { return sample{}, fail }
+	_, err = s.minimum(math.Inf(1))
+	assert.ErrorIs(t, err, fail)
+}
+
+func TestInterpolation(t *testing.T) {
+	// A cubic in ln k is met exactly.
+	f := func(k float64) float64 { x := math.Log(k); return 5 - 3*x + x*x*x }
+	slope := func(k float64) float64 { x := math.Log(k); return (3*x*x - 3) / k }
+	a := sample{k: 2, value: f(2), slope: slope(2), level: 1}
+	b := sample{k: 4, value: f(4), slope: slope(4), level: 3}
+	require.True(t, encloses(a, b))
+	assert.False(t, encloses(b, a))
+	m := interpolated(a, b)
+	assert.InEpsilon(t, math.E, m.k, 1e-12)
+	assert.InEpsilon(t, 3, m.value, 1e-12)
+	assert.Equal(t, 3, m.level)
+	half := middle(a, b)
+	assert.InEpsilon(t, math.Sqrt(8), half.k, 1e-14)
+	assert.InEpsilon(t, f(math.Sqrt(8)), half.value, 1e-12)
 }
 
 func TestMarangoniBound(t *testing.T) {
