@@ -321,10 +321,10 @@ func sectionD(t *testing.T, r reference) float64 {
 	return r.asked(t, l, Search{})
 }
 
-// sublayer extrapolates nothing: at γ = 70 the top of the layer is stiffer by 30
-// orders of magnitude, and the limit is reached to exp(-2·0.38·70).
+// sublayer extrapolates nothing: at γ = 50 the top of the layer is stiffer by 21
+// orders of magnitude, and the limit is reached to exp(-2·0.38·50).
 func sublayer(t *testing.T, r reference) float64 {
-	const gamma = 70
+	const gamma = 50
 	o, err := Layer{Viscosity: Exponential(gamma, 1)}.Critical()
 	require.NoError(t, err)
 	if r.quantity == "k_sub" {

@@ -55,7 +55,7 @@ func TestTwoMinima(t *testing.T) {
 		s, err := NewSolver(l, nil)
 		require.NoError(t, err)
 		var curve []Onset
-		for k := 0.7; k < 50; k *= 1.08 {
+		for k := 0.7; k < 40; k *= 1.15 {
 			o, err := s.Neutral(Search{}, k)
 			require.NoError(t, err)
 			curve = append(curve, o)
@@ -81,7 +81,7 @@ func TestTwoMinima(t *testing.T) {
 		t.Logf("viscosity %.1e: minima at k = %.3g, Ra = %.4g; found %v", weak, ks, values, o)
 		require.NotEmpty(t, ks)
 		assert.LessOrEqual(t, o.Value, values[best])
-		assert.InEpsilon(t, ks[best], o.Wavenumber, 0.09)
+		assert.InEpsilon(t, ks[best], o.Wavenumber, 0.15)
 		if len(ks) == 2 {
 			winners[best] = true
 		}
