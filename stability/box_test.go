@@ -41,6 +41,21 @@ func TestBoxesOfManyWidths(t *testing.T) {
 	}
 }
 
+// In a narrow box, or one of other sides, wavenumbers left of the minimum are
+// passed over as long as the bound falls, not taken for the end.
+func TestNarrowWavesDoNotEndTheSearch(t *testing.T) {
+	s, err := NewSolver(Layer{}, nil)
+	require.NoError(t, err)
+	q, err := s.question(Search{})
+	require.NoError(t, err)
+	assert.False(t, q.rises(1))
+	assert.True(t, q.rises(4))
+	first, _, err := s.InBox(Search{}, Box{Aspect: 60})
+	require.NoError(t, err)
+	assert.InEpsilon(t, 27*math.Pow(math.Pi, 4)/4, first.Value, 1e-3)
+	assert.Greater(t, first.Rolls, 40)
+}
+
 // A wide box is no different from a layer without sides.
 func TestWideBox(t *testing.T) {
 	l := Layer{Bottom: Rigid, Top: Rigid}

@@ -144,7 +144,7 @@ func TestOscillatoryBranchByName(t *testing.T) {
 // A slowly diffusing solute makes thin layers at rigid walls, which the coarse
 // level of the search does not resolve: the answer comes from finer ones.
 func TestThinSoluteLayers(t *testing.T) {
-	l := Layer{Bottom: Rigid, Top: Rigid, Prandtl: 7, Solute: Solute{Rayleigh: 3e4, Diffusivity: 0.006}}
+	l := Layer{Bottom: Rigid, Top: Rigid, Prandtl: 7, Solute: Solute{Rayleigh: 1e5, Diffusivity: 0.003}}
 	s, err := NewSolver(l, nil)
 	require.NoError(t, err)
 	o, err := s.Critical()

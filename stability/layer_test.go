@@ -101,6 +101,28 @@ func TestUnlistedJump(t *testing.T) {
 	assert.InEpsilon(t, a.Rayleigh, b.Rayleigh, 1e-11)
 }
 
+// The temperature and the gradient of each base state belong together, and the
+// temperature at the top is zero.
+func TestBaseStatesAreConsistent(t *testing.T) {
+	for _, b := range []Base{
+		{}, InternalHeating(), InternalHeatingBetween(), MixedHeating(3), MixedFlux(0.3), CoolingFromAbove(0.03),
+		Gradient(func(z float64) float64 { return math.Exp(z) }),
+		Temperature(func(z float64) float64 { return math.Cos(z) - math.Cos(1) }),
+	} {
+		s, err := b.resolve()
+		require.NoError(t, err)
+		for _, z := range []float64{0.1, 0.4, 0.85} {
+			assert.InDelta(t, -first(s.temperature, z), s.gradient(z), 1e-8, "%v at %g", b, z)
+			assert.LessOrEqual(t, math.Abs(s.gradient(z)), s.largest, "%v", b)
+		}
+		assert.InDelta(t, 0, s.temperature(1), 1e-13, "%v", b)
+		assert.Equal(t, b.String() == Base{}.String(), s.unit(), "%v", b)
+	}
+	uniform, err := MixedFlux(0).resolve()
+	require.NoError(t, err)
+	assert.True(t, uniform.unit())
+}
+
 // A base state given by its temperature is as good as one given by its gradient.
 func TestTemperatureAndGradientAgree(t *testing.T) {
 	t0 := func(z float64) float64 { return math.Exp(-2*z) + 0.3*z }
